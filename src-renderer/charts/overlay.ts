@@ -1,0 +1,175 @@
+// What Chart.js does not draw: shadings and marks below the data; axis words, legend and crosshair above it.
+import type { Chart } from 'chart.js';
+import { dash, lineWidth } from './drawing-order.ts';
+import { emptiestCorner } from './legend-corner.ts';
+import { faint, paintColour, type ReadToken } from './paint.ts';
+import { axisLabel, valueAt, type Cursor, type Picture, type Series } from './series.ts';
+
+type Canvas = Chart<'line'>;
+
+const note = '11px "Fira Sans", sans-serif';
+
+function pixel(chart: Canvas, axis: 'x' | 'y', value: number): number {
+  return chart.scales[axis]?.getPixelForValue(value) ?? NaN;
+}
+
+/** Shadings and marks, kept within the plot. */
+export function paintUnder(chart: Canvas, picture: Picture, read: ReadToken): void {
+  const { ctx, chartArea: area } = chart;
+  ctx.save();
+  ctx.beginPath();
+  ctx.rect(area.left, area.top, area.width, area.height);
+  ctx.clip();
+  ctx.font = note;
+  for (const shading of picture.shadings) {
+    const a = pixel(chart, shading.axis, shading.from);
+    const b = pixel(chart, shading.axis, shading.to);
+    const from = Math.min(a, b);
+    const size = Math.max(1, Math.abs(b - a));
+    ctx.fillStyle = faint(read(shading.token), 0.13);
+    if (shading.axis === 'x') ctx.fillRect(from, area.top, size, area.height);
+    else ctx.fillRect(area.left, from, area.width, size);
+    ctx.fillStyle = read('--ink-3');
+    const width = ctx.measureText(shading.label).width;
+    if (shading.axis === 'x' && width + 12 < size) {
+      ctx.textAlign = 'right';
+      ctx.fillText(shading.label, from + size - 6, area.bottom - 6);
+    } else if (shading.axis === 'y' && size > 16) {
+      ctx.textAlign = 'right';
+      ctx.fillText(shading.label, area.right - 6, Math.max(area.top, from) + 13);
+    }
+  }
+  for (const mark of picture.marks) {
+    const at = Math.round(pixel(chart, mark.axis, mark.at)) + 0.5;
+    ctx.strokeStyle = read(mark.token);
+    ctx.fillStyle = read(mark.token);
+    ctx.lineWidth = 1;
+    ctx.beginPath();
+    if (mark.axis === 'x') {
+      ctx.moveTo(at, area.top);
+      ctx.lineTo(at, area.bottom);
+    } else {
+      ctx.moveTo(area.left, at);
+      ctx.lineTo(area.right, at);
+    }
+    ctx.stroke();
+    if (mark.axis === 'x') {
+      const fits = at + 6 + ctx.measureText(mark.label).width < area.right;
+      ctx.textAlign = fits ? 'left' : 'right';
+      ctx.fillText(mark.label, at + (fits ? 6 : -6), area.top + 11);
+    } else {
+      ctx.textAlign = 'right';
+      ctx.fillText(mark.label, area.right - 6, at - 5);
+    }
+  }
+  ctx.restore();
+}
+
+/** Axis words, legend, crosshair with a dot on every series that is read. */
+export function paintOver(chart: Canvas, picture: Picture, cursor: Cursor | null, read: ReadToken): void {
+  const { ctx, chartArea: area } = chart;
+  ctx.save();
+  ctx.font = note;
+  ctx.fillStyle = read('--ink-2');
+  ctx.textAlign = 'left';
+  ctx.fillText(axisLabel(picture.y), Math.max(0, area.left - 40), area.top - 10);
+  ctx.textAlign = 'right';
+  ctx.fillText(axisLabel(picture.x), area.right, chart.height - 4);
+  if (picture.legend) paintLegend(chart, picture, read);
+  if (cursor) paintCursor(chart, picture, cursor, read);
+  ctx.restore();
+}
+
+function* drawnPoints(chart: Canvas): Generator<{ x: number; y: number }> {
+  for (let k = 0; k < chart.data.datasets.length; k += 1) {
+    for (const point of chart.getDatasetMeta(k).data) yield point;
+  }
+}
+
+function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
+  const { ctx, chartArea: area } = chart;
+  const named = picture.series.filter((one) => one.quiet !== true);
+  if (named.length === 0) return;
+  const widest = Math.max(...named.map((one) => ctx.measureText(one.label).width));
+  const width = widest + 46;
+  const height = named.length * 16 + 10;
+  if (width > area.width * 0.6 || height > area.height * 0.75) return;
+  const plot = { left: area.left, top: area.top, width: area.width, height: area.height };
+  const box = emptiestCorner(drawnPoints(chart), plot, width, height);
+  ctx.fillStyle = faint(read('--panel'), 0.82);
+  ctx.fillRect(box.left, box.top, width, height);
+  named.forEach((one, i) => {
+    const y = box.top + 13 + i * 16;
+    swatch(ctx, one, box.left + 8, y, read);
+    ctx.fillStyle = read('--ink');
+    ctx.textAlign = 'left';
+    ctx.fillText(one.label, box.left + 38, y + 4);
+  });
+}
+
+function swatch(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number, read: ReadToken): void {
+  const colour = paintColour(one.paint, read);
+  ctx.strokeStyle = colour;
+  ctx.fillStyle = colour;
+  ctx.lineWidth = lineWidth(one);
+  if (one.drawn !== 'points') {
+    ctx.setLineDash(dash(one));
+    ctx.beginPath();
+    ctx.moveTo(x, y);
+    ctx.lineTo(x + 24, y);
+    ctx.stroke();
+    ctx.setLineDash([]);
+  }
+  if (one.drawn !== 'line') shape(ctx, one.shape ?? 'circle', x + 12, y);
+}
+
+function shape(ctx: CanvasRenderingContext2D, kind: NonNullable<Series['shape']>, x: number, y: number): void {
+  const outline = {
+    circle: null,
+    triangle: [0, -3, 3, 2.5, -3, 2.5],
+    rect: [-2.3, -2.3, 2.3, -2.3, 2.3, 2.3, -2.3, 2.3],
+    rectRot: [0, -3.2, 3.2, 0, 0, 3.2, -3.2, 0],
+    cross: [-3, 0, 3, 0, 0, 0, 0, -3, 0, 3],
+  }[kind];
+  ctx.beginPath();
+  if (!outline) ctx.arc(x, y, 2.75, 0, 2 * Math.PI);
+  else for (let i = 0; i < outline.length; i += 2) ctx.lineTo(x + (outline[i] ?? 0), y + (outline[i + 1] ?? 0));
+  if (kind === 'cross') ctx.stroke();
+  else ctx.fill();
+}
+
+function paintCursor(chart: Canvas, picture: Picture, cursor: Cursor, read: ReadToken): void {
+  const { ctx, chartArea: area } = chart;
+  const x = pixel(chart, 'x', cursor.x);
+  if (!(x >= area.left - 0.5 && x <= area.right + 0.5)) return;
+  ctx.strokeStyle = read('--accent');
+  ctx.lineWidth = 1;
+  ctx.beginPath();
+  ctx.moveTo(Math.round(x) + 0.5, area.top - 4);
+  ctx.lineTo(Math.round(x) + 0.5, area.bottom);
+  ctx.stroke();
+  for (const one of picture.series) {
+    if (one.quiet === true || one.drawn === 'points') continue;
+    const y = valueAt(one, cursor.x);
+    if (y === null) continue;
+    const at = pixel(chart, 'y', y);
+    if (at < area.top || at > area.bottom) continue;
+    ctx.beginPath();
+    ctx.arc(x, at, 3.5, 0, 2 * Math.PI);
+    ctx.fillStyle = read('--panel');
+    ctx.fill();
+    ctx.strokeStyle = paintColour(one.paint, read);
+    ctx.lineWidth = 1.5;
+    ctx.stroke();
+  }
+  if (cursor.words === '') return;
+  const width = ctx.measureText(cursor.words).width + 16;
+  const left = Math.max(0, Math.min(chart.width - width, x - width / 2));
+  ctx.fillStyle = read('--accent');
+  ctx.beginPath();
+  ctx.roundRect(left, area.top - 22, width, 18, 4);
+  ctx.fill();
+  ctx.fillStyle = read('--on-accent');
+  ctx.textAlign = 'center';
+  ctx.fillText(cursor.words, left + width / 2, area.top - 9);
+}
