@@ -40,6 +40,8 @@ export interface SweepInput {
   readonly onSample?: (index: number, V: Float64Array) => void;
   /** Polled every few steps; true ends the run. */
   readonly cancelled?: () => boolean;
+  /** Spacing of the gate tables, V; 0.1 mV when absent. */
+  readonly tableSpacing?: number;
 }
 
 export interface SweepState {
@@ -47,7 +49,7 @@ export interface SweepState {
   readonly V: Float64Array;
   /** Per gated channel, gates in order: gates[channelIndex][gateIndex][compartment]. Absent: steady at V. */
   readonly gates?: readonly (readonly Float64Array[])[];
-  /** V, per pipette with a node of its own; absent: at its compartment's V. */
+  /** V, one per pipette in order; of use to pipettes with a node of their own. Absent: at its compartment's V. */
   readonly pipetteV?: Float64Array;
 }
 
