@@ -152,13 +152,17 @@ function largest(regionArea: readonly Float64Array[], k: number): number {
 }
 
 /** The point of a branch's midline at a length from its start, m. */
-export function pointAt(branch: ShapeBranch, x: Metre): [Metre, Metre, Metre] {
-  const last = branch.at.length - 1;
-  let n = branch.at.findIndex((end) => end >= x);
-  if (n < 0) n = last;
-  if (n === 0) return [branch.xyz[0]!, branch.xyz[1]!, branch.xyz[2]!];
-  const from = branch.at[n - 1]!;
-  const share = (x - from) / (branch.at[n]! - from);
-  const along = (axis: number) => branch.xyz[3 * n - 3 + axis]! * (1 - share) + branch.xyz[3 * n + axis]! * share;
+function pointAt(branch: ShapeBranch, x: Metre): [Metre, Metre, Metre] {
+  let low = 0;
+  let high = branch.at.length - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (branch.at[middle]! < x) low = middle + 1;
+    else high = middle;
+  }
+  if (low === 0) return [branch.xyz[0]!, branch.xyz[1]!, branch.xyz[2]!];
+  const from = branch.at[low - 1]!;
+  const share = (x - from) / (branch.at[low]! - from);
+  const along = (axis: number) => branch.xyz[3 * low - 3 + axis]! * (1 - share) + branch.xyz[3 * low + axis]! * share;
   return [along(0), along(1), along(2)];
 }

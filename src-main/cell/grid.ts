@@ -1,6 +1,5 @@
 // The grid: a tree of compartments in SI, the one form in which a cell reaches the solver and the forecast.
 import type { Site } from '../contract/documents.ts';
-import type { Volt } from '../units/si.ts';
 
 /** Row k is compartment k: parent[k] < k, parent[0] = -1. All arrays have `count` entries, grid order. */
 export interface Grid {
@@ -37,24 +36,10 @@ export interface GridConductance {
   readonly channel: string;
   /**
    * V; one entry per compartment, since regions may differ. NaN in all entries: the stored channel's own, which this layer
-   * does not know (`withReversals` fills it in). Where a cell uses a stored channel both with its own reversal potential
+   * does not know; the solver fills it in. Where a cell uses a stored channel both with its own reversal potential
    * and with another, there are two entries of the same name.
    */
   readonly reversal: Float64Array;
   /** S. */
   readonly conductance: Float64Array;
-}
-
-/**
- * The grid with every reversal potential known: entries that leave it to the stored channel get `reversalOf(channel)`, V.
- */
-export function withReversals(grid: Grid, reversalOf: (channel: string) => Volt): Grid {
-  return {
-    ...grid,
-    conductances: grid.conductances.map((entry) =>
-      entry.reversal.some(Number.isNaN)
-        ? { ...entry, reversal: entry.reversal.map((E) => (Number.isNaN(E) ? reversalOf(entry.channel) : E)) }
-        : entry,
-    ),
-  };
 }

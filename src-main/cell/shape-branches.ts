@@ -24,7 +24,9 @@ export function branchesOf(reading: SwcRead): ShapeBranch[] {
   const { samples, main } = reading;
   const branches: ShapeBranch[] = [];
   const waiting: Start[] = [];
-  const push = (starts: readonly Start[]) => waiting.push(...starts.toReversed());
+  const push = (starts: readonly Start[]) => {
+    for (const start of starts.toReversed()) waiting.push(start);
+  };
   const kidsOfNeurite = (i: number) =>
     [...kidsAt(reading.kids, i)].filter((k) => reading.gone[k] === 0 && !samples[k]!.soma);
 
