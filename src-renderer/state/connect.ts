@@ -1,0 +1,33 @@
+// Ties the state together once, at the start: who follows the plan, who hears the engine, what the shell commands.
+import { bridge } from '../bridge.ts';
+import { runShellCommand } from './actions.ts';
+import { drawing } from './drawing.svelte.ts';
+import { estimate } from './estimate.svelte.ts';
+import { jobs } from './jobs.svelte.ts';
+import { notebook } from './notebook.svelte.ts';
+import { notices } from './notices.svelte.ts';
+import { plan } from './plan.svelte.ts';
+import { rehearsal } from './rehearsal.svelte.ts';
+
+export function connect(): void {
+  plan.whenChanged((document) => {
+    drawing.follow(document);
+    estimate.follow(document);
+  });
+  bridge.onEvent((event) => {
+    jobs.hear(event);
+    rehearsal.hear(event);
+    if (event.event === 'worker restarted') notices.say(`A worker was restarted: ${event.reason}`);
+    if (event.event === 'engine restarted') {
+      notices.fault(`The engine was restarted: ${event.reason}. What was running has ended; the notebook is whole.`);
+      void notebook.load(false);
+    }
+  });
+  bridge.onCommand(runShellCommand);
+  // Leaving within the moment before a draft is kept must not lose it.
+  window.addEventListener('pagehide', () => void plan.keep());
+  document.addEventListener('visibilitychange', () => {
+    if (document.visibilityState === 'hidden') void plan.keep();
+  });
+  void notebook.load(true);
+}

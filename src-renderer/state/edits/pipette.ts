@@ -1,0 +1,145 @@
+// Changes of the rig that keep the rest of the plan in step. Pure: plan in, plan out.
+import type {
+  Block,
+  Ladder,
+  Lane,
+  PipetteDocument,
+  PipetteLetter,
+  PlanDocument,
+  Site,
+} from '../../../src-main/contract/documents.ts';
+
+export type Mode = PipetteDocument['mode'];
+
+/** The pipette of that letter, or null. */
+export function pipetteOf(plan: PlanDocument, letter: PipetteLetter): PipetteDocument | null {
+  return plan.rig.pipettes.find((p) => p.letter === letter) ?? null;
+}
+
+/** The plan with some fields of one pipette replaced. */
+export function withPipette(plan: PlanDocument, letter: PipetteLetter, fields: Partial<PipetteDocument>): PlanDocument {
+  const pipettes = plan.rig.pipettes.map((p) => (p.letter === letter ? { ...p, ...fields } : p));
+  return { ...plan, rig: { ...plan.rig, pipettes } };
+}
+
+/** Moves a pipette; a site that is the same changes nothing. */
+export function withSite(plan: PlanDocument, letter: PipetteLetter, site: Site): PlanDocument {
+  const now = pipetteOf(plan, letter)?.site;
+  return now === undefined || JSON.stringify(now) === JSON.stringify(site) ? plan : withPipette(plan, letter, { site });
+}
+
+/** Where a voltage-clamp lane holds when nothing better is known: mV on the dial. */
+const usualHolding_mV = -70;
+
+/**
+ * Switches a pipette's mode and turns its lane's levels into the other unit through the input resistance
+ * (ΔV = I·R): a voltage step becomes the current that would make it at rest, and back. Rounded to 1 mV and 10 pA;
+ * a starting point to edit, not an equivalence.
+ *
+ * @param inputResistance_MOhm of the cell; 100 where it is not known.
+ */
+export function withMode(
+  plan: PlanDocument,
+  letter: PipetteLetter,
+  mode: Mode,
+  inputResistance_MOhm: number | null,
+): PlanDocument {
+  const pipette = pipetteOf(plan, letter);
+  if (pipette === null || pipette.mode === mode) return plan;
+  const lane = plan.protocol.lanes.find((l) => l.pipette === letter);
+  const moved = withPipette(plan, letter, { mode, ...(mode === 'voltage clamp' ? { bridge_MOhm: 0 } : {}) });
+  const unit = mode === 'voltage clamp' ? 'mV' : 'pA';
+  if (lane === undefined || lane.unit === unit) return moved;
+  const turn = turning(lane, inputResistance_MOhm ?? 100);
+  const protocol = {
+    ...plan.protocol,
+    lanes: plan.protocol.lanes.map((l) => (l.pipette === letter ? turnedLane(l, unit, turn) : l)),
+    ladders: plan.protocol.ladders.map((l) => (l.lane === letter ? turnedLadder(l, turn) : l)),
+  };
+  return { ...moved, protocol };
+}
+
+interface Turning {
+  readonly level: (value: number) => number;
+  readonly difference: (value: number) => number;
+  readonly holding: number;
+}
+
+function turning(lane: Lane, resistance_MOhm: number): Turning {
+  // mV / MΩ = nA = 1000 pA.
+  if (lane.unit === 'mV') {
+    const difference = (mV: number): number => 10 * Math.round(((mV / resistance_MOhm) * 1000) / 10) + 0;
+    return { level: (mV) => difference(mV - lane.holding), difference, holding: 0 };
+  }
+  const difference = (pA: number): number => Math.round((pA * resistance_MOhm) / 1000) + 0;
+  return { level: (pA) => usualHolding_mV + difference(pA - lane.holding), difference, holding: usualHolding_mV };
+}
+
+function turnedLane(lane: Lane, unit: Lane['unit'], turn: Turning): Lane {
+  return { ...lane, unit, holding: turn.holding, blocks: lane.blocks.map((block) => turnedBlock(block, turn)) };
+}
+
+function turnedBlock(block: Block, turn: Turning): Block {
+  switch (block.kind) {
+    case 'hold':
+      return block;
+    case 'step':
+      return { ...block, level: turn.level(block.level) };
+    case 'ramp':
+      return { ...block, from: turn.level(block.from), to: turn.level(block.to) };
+    case 'pulse train':
+      return { ...block, level: turn.level(block.level), base: turn.level(block.base) };
+    default:
+      return block satisfies never;
+  }
+}
+
+function turnedLadder(ladder: Ladder, turn: Turning): Ladder {
+  if (!['level', 'base', 'from', 'to'].includes(ladder.number)) return ladder;
+  if ('list' in ladder.rungs) return { ...ladder, rungs: { list: ladder.rungs.list.map(turn.level) } };
+  const { start, increment, count } = ladder.rungs;
+  // A rung that rounds to nothing would make every sweep the same.
+  const smallest = Math.sign(increment) * (turn.holding === 0 ? 10 : 1);
+  return { ...ladder, rungs: { start: turn.level(start), increment: turn.difference(increment) || smallest, count } };
+}
+
+/** Adds pipette B in current clamp at the site, with a lane that holds 0 pA as long as A's lane lasts. */
+export function withSecondPipette(plan: PlanDocument, site: Site): PlanDocument {
+  if (pipetteOf(plan, 'B') !== null) return plan;
+  const pipette: PipetteDocument = {
+    letter: 'B',
+    site,
+    mode: 'current clamp',
+    // A dendritic pipette is finer than a somatic one: 28 MΩ is common practice.
+    accessResistance_MOhm: 28,
+    strayCapacitance_pF: 0,
+    bridge_MOhm: 28,
+  };
+  const duration_ms = plan.protocol.lanes[0]?.blocks.reduce((sum, b) => sum + b.duration_ms, 0) ?? 100;
+  const lane: Lane = { pipette: 'B', unit: 'pA', holding: 0, blocks: [{ kind: 'hold', id: 'hold-b', duration_ms }] };
+  return {
+    ...plan,
+    rig: { ...plan.rig, pipettes: [...plan.rig.pipettes, pipette] },
+    protocol: { ...plan.protocol, lanes: [...plan.protocol.lanes.filter((l) => l.pipette !== 'B'), lane] },
+  };
+}
+
+/** Takes pipette B away, and with it its lane, its ladders, the readings on it and a question that asked for one. */
+export function withoutSecondPipette(plan: PlanDocument): PlanDocument {
+  if (pipetteOf(plan, 'B') === null) return plan;
+  const { lanes, ladders, readings } = plan.protocol;
+  const keptReadings = readings.filter((r) => r.pipette !== 'B' && r.window.lane !== 'B' && r.baseline?.lane !== 'B');
+  const { question, clampWindow, ...rest } = plan;
+  return {
+    ...rest,
+    ...(question !== undefined && keptReadings.some((r) => r.id === question.reading) ? { question } : {}),
+    ...(clampWindow !== undefined && clampWindow.lane !== 'B' ? { clampWindow } : {}),
+    rig: { ...plan.rig, pipettes: plan.rig.pipettes.filter((p) => p.letter !== 'B') },
+    protocol: {
+      ...plan.protocol,
+      lanes: lanes.filter((l) => l.pipette !== 'B'),
+      ladders: ladders.filter((l) => l.lane !== 'B'),
+      readings: keptReadings,
+    },
+  };
+}
