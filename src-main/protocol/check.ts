@@ -16,7 +16,7 @@ export function refuseFaults(protocol: ProtocolDocument): void {
   ladderFaults(protocol, faults);
   blockFaults(protocol, faults);
   // Lengths mean nothing while blocks are wrong: one negative duration would be reported at every window.
-  const sound = faults.none;
+  const sound = faults.count === 0;
   if (sound) lengthFaults(protocol, faults);
   protocol.readings.forEach((reading, r) => {
     const place = `protocol.readings[${r}]`;

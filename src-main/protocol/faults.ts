@@ -24,8 +24,8 @@ export class Faults {
     }
   }
 
-  get none(): boolean {
-    return this.#found.length === 0;
+  get count(): number {
+    return this.#found.length;
   }
 
   /** @throws Refusal with all faults, when there are any. */

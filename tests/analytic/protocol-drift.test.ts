@@ -1,0 +1,46 @@
+// Arithmetic of time: exact rational edges against the ones laid out, over ten million samples.
+import { describe, expect, it } from 'vitest';
+import type { Block } from '../../src-main/contract/documents.ts';
+import { sampleTime } from '../../src-main/protocol/sampling.ts';
+import { layOut } from '../../src-main/protocol/sweeps.ts';
+import { ticksOfUs } from '../../src-main/protocol/ticks.ts';
+import { clampProtocol, hold, step } from '../support/protocols.ts';
+
+describe('time does not drift', () => {
+  it('sample 10⁷ at 33.3 µs stands at 333 s to the last bit', () => {
+    expect(sampleTime(10_000_000, ticksOfUs(33.3))).toBe(333);
+    expect(sampleTime(9_999_999, ticksOfUs(33.3))).toBe(332.9999667);
+  });
+
+  it('a thousand blocks of 0.1 ms end at 100 ms to the last bit', () => {
+    const blocks = Array.from({ length: 1000 }, (_, i) => step(`b${i}`, 0.1, i % 2));
+    const { lanes, duration } = layOut(clampProtocol(blocks)).sweep(0);
+    expect(duration).toBe(0.1);
+    // Adding 0.1 a thousand times in doubles ends at 99.9999999999986 ms.
+    lanes[0]!.blocks.forEach(({ end }, i) => expect(end).toBe((i + 1) / 10_000));
+  });
+
+  it('the last of 100000 pulses at 3 Hz starts within half a picosecond of 99999/3 s', () => {
+    const train: Block = {
+      kind: 'pulse train',
+      id: 'p',
+      duration_ms: 33_334_000,
+      level: 0,
+      base: -70,
+      width_ms: 1,
+      rate_Hz: 3,
+      count: 100_000,
+    };
+    const { lanes } = layOut(clampProtocol([train], { sampling_us: 1000, sweepInterval_ms: 4e7 })).sweep(0);
+    const pulses = lanes[0]!.command.filter(({ v0 }) => v0 === 0);
+    expect(pulses).toHaveLength(100_000);
+    // 33333 s is 2^15 s: a double there has steps of 7 ps.
+    for (const k of [1, 2, 99_998, 99_999]) expect(Math.abs(pulses[k]!.start - k / 3)).toBeLessThan(8e-12);
+  });
+
+  it('the number of samples is right where the quotient of doubles is not', () => {
+    // 0.3 ms / 0.1 ms is 2.9999999999999996 in doubles.
+    const laid = layOut(clampProtocol([hold('h', 0.3)], { sampling_us: 100 }));
+    expect(laid.sweep(0).samples).toBe(4);
+  });
+});
