@@ -24,6 +24,10 @@ export class Faults {
     }
   }
 
+  get all(): readonly RefusalData[] {
+    return this.#found;
+  }
+
   get count(): number {
     return this.#found.length;
   }

@@ -47,6 +47,8 @@ export interface PrepareOptions {
   readonly fineness?: number;
   /** Divides the step and the spacing of the gate tables: 2 takes twice as many of each. */
   readonly stepDivisor?: number;
+  /** Cuts the grid; one that remembers may stand in. */
+  readonly cut?: typeof cutGrid;
 }
 
 /**
@@ -65,7 +67,7 @@ export function preparePlan(plan: PlanDocument, options: PrepareOptions = {}): P
   stepFaults(plan, faults);
   const laidOut = faults.collect(() => layOut(plan.protocol));
   if (laidOut) planFaults(plan, faults);
-  const cut = cutAtSites(plan, fineness, faults);
+  const cut = cutAtSites(plan, options, faults);
   const places = cut && placesOf(plan, cut, faults);
   if (cut) initialFaults(plan, cut, fineness, faults);
   faults.settle();
@@ -118,12 +120,19 @@ function playing(
 }
 
 /** The grid, a centre at every site. Sites off the cell are refused by their own paths, all of them. */
-function cutAtSites(plan: PlanDocument, fineness: number, faults: Faults): Grid | undefined {
-  const bare = faults.collect(() => cutGrid(plan.cell, [], { fineness }));
+function cutAtSites(
+  plan: PlanDocument,
+  { fineness = 1, cut = cutGrid }: PrepareOptions,
+  faults: Faults,
+): Grid | undefined {
+  const atSites = new Faults();
+  const grid = atSites.collect(() => cut(plan.cell, sitesOf(plan), { fineness }));
+  if (grid) return grid;
   const before = faults.count;
+  const bare = faults.collect(() => cut(plan.cell, [], { fineness }));
   if (bare) placesOf(plan, bare, faults);
-  if (bare === undefined || faults.count > before) return undefined;
-  return cutGrid(plan.cell, sitesOf(plan), { fineness });
+  if (faults.count === before) faults.addAll(atSites.all);
+  return undefined;
 }
 
 function sitesOf(plan: PlanDocument): Site[] {
