@@ -73,8 +73,10 @@ export function paintOver(chart: Canvas, picture: Picture, cursor: Cursor | null
   ctx.fillStyle = read('--ink-2');
   ctx.textAlign = 'left';
   ctx.fillText(axisLabel(picture.y), Math.max(0, area.left - 40), area.top - 10);
-  ctx.textAlign = 'right';
-  ctx.fillText(axisLabel(picture.x), area.right, chart.height - 4);
+  if (picture.bareX !== true) {
+    ctx.textAlign = 'right';
+    ctx.fillText(axisLabel(picture.x), area.right, chart.height - 4);
+  }
   if (picture.legend) paintLegend(chart, picture, read);
   if (cursor) paintCursor(chart, picture, cursor, read);
   ctx.restore();

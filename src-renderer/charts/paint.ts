@@ -36,3 +36,13 @@ export function faint(colour: string, opacity: number): string {
   const parts = channels(colour);
   return parts ? `rgb(${parts.join(' ')} / ${opacity})` : colour;
 }
+
+/** The same colour as a CSS expression, which follows the theme by itself. */
+export function paintCss(paint: Paint): string {
+  if ('token' in paint) return `var(${paint.token})`;
+  const at = Math.max(0, Math.min(1, paint.at));
+  const lower = at <= 0.5 ? 0 : 1;
+  const share = Math.round(1000 * (2 * at - lower)) / 10;
+  const token = (k: number): string => `var(--sweep-${paint.sweeps}-${k})`;
+  return `color-mix(in srgb, ${token(lower + 1)} ${share}%, ${token(lower)})`;
+}

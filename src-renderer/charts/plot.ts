@@ -20,6 +20,7 @@ Chart.register(LineController, LineElement, PointElement, LinearScale);
 /** Common to every chart, so that charts and strips stacked on one time axis line up, px. */
 export const plotInset = { left: 52, right: 14 } as const;
 const mostGridlines = 5;
+const padding = { top: 24, right: plotInset.right, bottom: 18, left: 0 };
 
 export interface Plot {
   readonly draw: (picture: Picture, cursor: Cursor | null) => void;
@@ -88,7 +89,7 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
       responsive: true,
       maintainAspectRatio: false,
       events: [],
-      layout: { padding: { top: 24, right: plotInset.right, bottom: 18, left: 0 } },
+      layout: { padding },
       onResize: () => queueMicrotask(refresh),
       scales: {
         x: {
@@ -145,10 +146,17 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
       Object.assign(scale, {
         border: { color: read('--edge') },
         grid: { ...(scale.grid as object), color: key === 'x' ? read('--edge') : read('--grid') },
-        ticks: { ...(scale.ticks as object), color: read('--ink-2'), font },
+        ticks: {
+          ...(scale.ticks as object),
+          color: read('--ink-2'),
+          font,
+          display: key === 'y' || picture.bareX !== true,
+        },
       });
     }
     const shown = picture;
+    const top = shown.y.words === '' && shown.y.unit === '' ? 8 : 24;
+    chart.options.layout = { padding: { ...padding, top, bottom: shown.bareX === true ? 0 : padding.bottom } };
     chart.data.datasets = drawingOrder(shown.series).map((one) => dataset(one, shown.xView, columns, read));
     chart.update('none');
   }

@@ -51,6 +51,8 @@ export interface Picture {
   readonly xView: Range;
   readonly yView: Range;
   readonly legend: boolean;
+  /** The x axis is drawn once, below: this one keeps only its line. */
+  readonly bareX?: boolean;
 }
 
 /** Where all charts on one time axis are read. */
