@@ -42,7 +42,7 @@ function growTrunk(growth: Growth): void {
   const { stream } = growth;
   const length = stream.between(650, 750);
   const obliques = 7 + Math.floor(stream.unit() * 3);
-  const places = Array.from({ length: obliques }, () => stream.between(50, 0.6 * length)).sort((a, b) => a - b);
+  const places = Array.from({ length: obliques }, () => stream.between(90, 0.6 * length)).sort((a, b) => a - b);
   const radiusAt = (x: number) => 2 - x / length;
   let tip = growth.stem(apical, [0.04, 1, 0.02], radiusAt(0));
   let x = 0;
