@@ -73,6 +73,12 @@ export class EngineClient {
     return () => void this.#listeners.delete(listener);
   }
 
+  /** Settles when no call is in flight any more, or after the given time. */
+  async quiet(most_ms: number): Promise<void> {
+    const end = this.#now() + most_ms;
+    while (this.#waiting.size > 0 && this.#now() < end) await new Promise((resolve) => setTimeout(resolve, 20));
+  }
+
   /** Ends the engine for good. */
   stop(): void {
     this.#stopped = true;

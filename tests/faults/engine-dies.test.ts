@@ -119,7 +119,7 @@ describe('the line to the engine', () => {
 describe('an engine under Node', () => {
   let client: EngineClient;
   afterEach(() => client.stop());
-  const open = (file = 'tests/support/stand-in-engine.mjs') =>
+  const open = (file = 'tests/support/stand-in-engine.cjs') =>
     (client = new EngineClient(startWithNode(resolve(file)), '/a.holdfast'));
 
   it('carries typed arrays, NaN and dates both ways', async () => {

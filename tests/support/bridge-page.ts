@@ -9,18 +9,20 @@ declare global {
   interface Window {
     bridge: Bridge;
     events: unknown[];
+    commands: unknown[];
   }
 }
 
-/** Builds the page into a new folder and gives that. On it, `bridge` and the list `events` are global. */
+/** Builds the page into a new folder and gives that. On it, `bridge` and the lists `events`, `commands` are global. */
 export async function buildBridgePage(target = 'chrome140'): Promise<string> {
   const folder = mkdtempSync(join(tmpdir(), 'holdfast-page-'));
   const bridge = JSON.stringify(resolve('src-renderer/bridge.ts'));
   writeFileSync(
     join(folder, 'page.ts'),
     `import { bridge } from ${bridge};
-     Object.assign(window, { bridge, events: [] });
-     bridge.onEvent((event) => window.events.push(event));`,
+     Object.assign(window, { bridge, events: [], commands: [] });
+     bridge.onEvent((event) => window.events.push(event));
+     bridge.onCommand((command) => window.commands.push(command));`,
   );
   writeFileSync(
     join(folder, 'index.html'),

@@ -8,6 +8,9 @@ import { openAppWindow, type AppWindow } from './app-window.ts';
 import { findBrowser, hasDisplay } from './find-browser.ts';
 import { serve } from './server.ts';
 
+/** How long a last save may take when all tabs are closed. */
+const lastWord_ms = 1500;
+
 /** Serves one notebook, opens a window on it where there is a display, and settles when all is over. */
 export async function runBrowserShell(notebook: string | undefined): Promise<void> {
   const path = notebook === undefined ? defaultNotebook() : resolve(notebook);
@@ -34,6 +37,7 @@ export async function runBrowserShell(notebook: string | undefined): Promise<voi
   process.stdin.pause();
   window?.close();
   await window?.ended;
+  await client.quiet(lastWord_ms);
   client.stop();
 }
 

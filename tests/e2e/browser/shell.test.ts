@@ -30,7 +30,7 @@ beforeAll(async () => {
   mkdirSync(join(folder, 'cells'));
   writeFileSync(join(folder, 'a.holdfast'), '');
   pages = await buildBridgePage();
-  client = new EngineClient(startWithNode(resolve('tests/support/stand-in-engine.mjs')), '/a.holdfast');
+  client = new EngineClient(startWithNode(resolve('tests/support/stand-in-engine.cjs')), '/a.holdfast');
   served = await serve({ pages, client, startFolder: folder });
   browser = await launchChromium();
   page = await browser.newPage();
