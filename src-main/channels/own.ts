@@ -1,13 +1,7 @@
 // A channel of the cell's own, from its document to what the solver evaluates.
 import type { ChannelDocument, GateDocument } from '../contract/documents.ts';
-import type { RefusalData } from '../contract/refusal.ts';
-import { Refusal } from '../units/refuse.ts';
 import type { Gate, Kinetics } from './kinetics.ts';
 import { rateOf } from './rate-forms.ts';
-
-/** Where a channel's rates must make sense, mV: wider than any membrane is taken, narrow enough for steep formulas. */
-const checkedFrom = -120;
-const checkedTo = 80;
 
 /**
  * Steady state and time constant from opening and closing rates.
@@ -41,37 +35,8 @@ function gateOf(gate: GateDocument): Gate {
   return { name, power, q10, q10Reference, ...course };
 }
 
-function faultsOf(gate: Gate, place: string): RefusalData[] {
-  for (let V = checkedFrom; V <= checkedTo; V++) {
-    const inf = gate.inf(V);
-    const tau = gate.tau(V);
-    // A hair of room for rounding in sums of exponentials.
-    const infFits = inf >= -1e-9 && inf <= 1 + 1e-9;
-    if (infFits && tau >= 0) continue;
-    return [
-      {
-        code: 'quantity-out-of-range',
-        thing: infFits ? 'time constant' : 'steady state',
-        place: `${place}.gates.${gate.name} at ${V} mV`,
-        value: infFits ? `${tau} ms` : String(inf),
-        remedy: infFits
-          ? 'change the rates so that the time constant is not negative'
-          : 'change the rates so that the steady state stays between 0 and 1',
-      },
-    ];
-  }
-  return [];
-}
-
-/**
- * The working form of a channel document.
- *
- * @throws Refusal `quantity-out-of-range`, one per gate at fault, where between −120 and 80 mV a steady state leaves
- *         0…1 or a time constant is negative or not a number. `place` is the document's path.
- */
-export function kineticsOf(channel: ChannelDocument, place = `cell.channels.${channel.name}`): Kinetics {
-  const gates = channel.gates.map(gateOf);
-  const [first, ...rest] = gates.flatMap((gate) => faultsOf(gate, place));
-  if (first !== undefined) throw new Refusal([first, ...rest]);
-  return { name: channel.name, reversal: channel.reversal_mV, gates, source: channel.source ?? 'the user' };
+/** The working form of a channel document. The rates are taken as they are: whether they make sense is checked with the plan. */
+export function kineticsOf(channel: ChannelDocument): Kinetics {
+  const { name, reversal_mV: reversal, source } = channel;
+  return { name, reversal, gates: channel.gates.map(gateOf), source: source ?? 'the user' };
 }

@@ -6,6 +6,8 @@ import type { Faults } from '../protocol/faults.ts';
 /** Voltages at which a user's own gates are tried, mV: beyond what any clamp commands, 1 mV apart. */
 const lowest_mV = -150;
 const highest_mV = 100;
+/** A fit to measured points may pass 1 by this much; a slip in a formula passes it by far. */
+const highest_inf = 1.05;
 
 /** A cell's own gates must be usable at every voltage a rehearsal may reach. Names the first voltage that fails. */
 export function ownChannelFaults(cell: CellDocument, faults: Faults): void {
@@ -15,13 +17,11 @@ export function ownChannelFaults(cell: CellDocument, faults: Faults): void {
       const remedy = 'give each channel its own name';
       faults.add('name-twice', { thing: 'channel', place: `${place}.name`, value: channel.name, remedy });
     }
-    faults
-      .collect(() => kineticsOf(channel, place))
-      ?.gates.forEach((gate, g) => {
-        const fault = firstFault(gate);
-        if (fault === undefined) return;
-        faults.add('quantity-out-of-range', { thing: `gate ${gate.name}`, place: `${place}.gates[${g}]`, ...fault });
-      });
+    kineticsOf(channel).gates.forEach((gate, g) => {
+      const fault = firstFault(gate);
+      if (fault === undefined) return;
+      faults.add('quantity-out-of-range', { thing: `gate ${gate.name}`, place: `${place}.gates[${g}]`, ...fault });
+    });
   });
 }
 
@@ -29,8 +29,9 @@ function firstFault(gate: Gate): { value: string; remedy: string } | undefined {
   for (let V = lowest_mV; V <= highest_mV; V += 1) {
     const inf = gate.inf(V);
     const tau = gate.tau(V);
-    // Rounding may leave a steady state a hair outside 0…1.
-    if (!(inf >= -1e-9 && inf <= 1 + 1e-9)) {
+    // Published fits pass 1 at the far end (the A-type gate of Connor and Stevens, 1.0007 at 41 mV), and rounding may
+    // leave a steady state a hair below 0.
+    if (!(inf >= -1e-9 && inf <= highest_inf)) {
       return { value: `steady state ${inf} at ${V} mV`, remedy: 'change the rates so that it stays within 0 and 1' };
     }
     if (!(tau > 0 && Number.isFinite(tau))) {
