@@ -1,9 +1,14 @@
-import { closeSync, copyFileSync, constants, fsyncSync, linkSync, openSync, rmSync } from 'node:fs';
+import { closeSync, copyFileSync, constants, fsyncSync, linkSync, mkdirSync, openSync, rmSync } from 'node:fs';
 import { basename, dirname, join } from 'node:path';
 
 /** A name in the same folder for a file that is still being made. */
 export function spareName(path: string): string {
   return join(dirname(path), `.${basename(path)}.${process.pid}-${Date.now()}.part`);
+}
+
+/** Makes the folder a file is to lie in, where there is none. */
+export function makeFolder(path: string): void {
+  mkdirSync(dirname(path), { recursive: true });
 }
 
 /**

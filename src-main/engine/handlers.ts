@@ -1,0 +1,25 @@
+import type { Answers, CheckedQuestion, RequestName } from '../contract/requests.ts';
+import type { Desk } from './desk.ts';
+import { cellHandlers } from './handlers/cell.ts';
+import { exchangeHandlers } from './handlers/exchange.ts';
+import { notebookHandlers } from './handlers/notebook.ts';
+import { planHandlers } from './handlers/plan.ts';
+import { rehearsalHandlers } from './handlers/rehearsal.ts';
+import { sessionHandlers } from './handlers/session.ts';
+
+/** Requests that are answered. */
+export type Answered = Exclude<RequestName, 'export traces' | 'export forecast' | 'export figure'>;
+
+/** One for every request: one that is missing does not compile. Refusals are thrown. */
+export type Handlers = {
+  readonly [N in Answered]: (question: CheckedQuestion<N>, desk: Desk) => Answers[N] | Promise<Answers[N]>;
+};
+
+export const handlers: Handlers = {
+  ...notebookHandlers,
+  ...cellHandlers,
+  ...planHandlers,
+  ...sessionHandlers,
+  ...rehearsalHandlers,
+  ...exchangeHandlers,
+};
