@@ -1,0 +1,64 @@
+// Traces as tables for any spreadsheet or script: one file per sweep, one column per trace.
+import type { TextFile } from '../contract/requests.ts';
+import type { Trace } from '../contract/results.ts';
+
+/**
+ * CSV files of a rehearsal's traces, one per sweep. First column `time_ms` from the sweep's start; then one column per
+ * trace, named for it with its unit, such as `recording:A (pA)`. Decimal points, commas between columns, ten
+ * significant digits, an empty field where there is no number.
+ *
+ * Traces of one sweep that start or step differently get their own file.
+ *
+ * @source RFC 4180 (2005): lines end in CR LF; names with a comma or quote are quoted.
+ */
+export function tracesToCsv(plan: { readonly name: string }, traces: readonly Trace[]): TextFile[] {
+  const tables = new Map<string, Trace[]>();
+  for (const trace of traces) {
+    const key = `${trace.sweep} ${trace.start_ms} ${trace.interval_ms}`;
+    tables.set(key, [...(tables.get(key) ?? []), trace]);
+  }
+  const sorted = [...tables.values()].sort((a, b) => sweepOf(a) - sweepOf(b));
+  const digits = String(Math.max(0, ...sorted.map(sweepOf)) + 1).length;
+  const names = new Map<string, number>();
+  return sorted.map((table) => {
+    const stem = `${fileStem(plan.name)}-sweep-${String(sweepOf(table) + 1).padStart(digits, '0')}`;
+    const before = names.get(stem) ?? 0;
+    names.set(stem, before + 1);
+    return { name: `${stem}${before === 0 ? '' : `-${before + 1}`}.csv`, text: tableText(table) };
+  });
+}
+
+function sweepOf(table: readonly Trace[]): number {
+  return table[0]?.sweep ?? 0;
+}
+
+function tableText(table: readonly Trace[]): string {
+  const first = table[0];
+  if (first === undefined) return '';
+  const rows = Math.max(...table.map(({ values }) => values.length));
+  const lines = [['time_ms', ...table.map(({ key, unit }) => quoted(`${key} (${unit})`))].join(',')];
+  for (let i = 0; i < rows; i += 1) {
+    const time = number(first.start_ms + i * first.interval_ms);
+    lines.push([time, ...table.map(({ values }) => number(values[i] ?? NaN))].join(','));
+  }
+  return `${lines.join('\r\n')}\r\n`;
+}
+
+/** Ten significant digits, no padding: beyond what any rehearsal is good for. */
+function number(value: number): string {
+  return Number.isFinite(value) ? String(Number(value.toPrecision(10))) : '';
+}
+
+function quoted(field: string): string {
+  return /[",\r\n]/.test(field) ? `"${field.replaceAll('"', '""')}"` : field;
+}
+
+/** A name as part of a file's name on any system: letters, digits, dots and hyphens. */
+export function fileStem(name: string): string {
+  const plain = name
+    .normalize('NFKD')
+    .replace(/[^\p{Letter}\p{Number}]+/gu, '-')
+    .replace(/^-+|-+$/g, '')
+    .toLowerCase();
+  return plain.slice(0, 80) || 'plan';
+}
