@@ -1,6 +1,14 @@
 import { defineConfig } from 'vitest/config';
 
-const real = { environment: 'node', testTimeout: 60_000, hookTimeout: 120_000, fileParallelism: false } as const;
+/** Real windows: one at a time, and after everything else, so that nothing competes with them. */
+const real = (groupOrder: number) =>
+  ({
+    environment: 'node',
+    testTimeout: 60_000,
+    hookTimeout: 120_000,
+    fileParallelism: false,
+    sequence: { groupOrder },
+  }) as const;
 
 export default defineConfig({
   test: {
@@ -14,9 +22,9 @@ export default defineConfig({
         },
       },
       // The built page in a real Chromium, served by the browser shell. Needs a build.
-      { test: { name: 'browser', include: ['tests/e2e/browser/**/*.test.ts'], ...real } },
-      // The built page in a real Electron window. Needs build:smoke and a display.
-      { test: { name: 'electron', include: ['tests/e2e/electron/**/*.test.ts'], ...real } },
+      { test: { name: 'browser', include: ['tests/e2e/browser/**/*.test.ts'], ...real(1) } },
+      // The built page in a real Electron window. Needs build:smoke and a runtime; skips itself without one.
+      { test: { name: 'electron', include: ['tests/e2e/electron/**/*.test.ts'], ...real(2) } },
     ],
   },
 });
