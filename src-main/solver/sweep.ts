@@ -8,10 +8,10 @@ import { timelineOf, timeOfStep } from './timeline.ts';
 import { workspaceOf, type Workspace } from './workspace.ts';
 
 /**
- * Regular steps after a break that are damped. What decays within half a step, and would ring, is down to e^-8 by then
+ * Regular steps after a break that are damped. What decays within half a step, and would ring, is down to e^-12 by then
  * (measured: tests/analytic/clamp-steps).
  */
-const dampedSteps = 4;
+const dampedSteps = 6;
 /** Compartment-steps between two looks at `cancelled`: a few milliseconds. */
 const workBetweenPolls = 100_000;
 
