@@ -1,8 +1,7 @@
 // Two sites of a cell at DC: how a voltage set at one arrives at the other.
 import type { DualSite } from '../contract/results.ts';
-import { operatingPoint, type OperatingPoint } from '../solver/operating-point.ts';
 import type { PreparedPlan } from '../solver/prepare.ts';
-import { heldPipettes } from '../solver/start.ts';
+import { operatingPointOf } from '../solver/start.ts';
 import { attenuation, inputResistance, slopeConductance, steadyTree, transferResistance } from '../solver/steady.ts';
 import { fromSi } from '../units/si.ts';
 
@@ -22,7 +21,7 @@ export function dualSiteOf(prepared: PreparedPlan): DualSiteAnswer {
   const [a, b] = prepared.pipettes;
   if (a === undefined || b === undefined) return { figures: null, notes: [] };
   const { grid, kinetics, temperature } = prepared;
-  const { state, firesOnItsOwn } = operatingPointOf(prepared);
+  const { state, firesOnItsOwn } = prepared.plan.initial ? operatingPointOf(prepared) : prepared.start();
   const none = 'Attenuation between the two sites is not given:';
   if (firesOnItsOwn) {
     return { figures: null, notes: [`${none} the cell fires on its own, so there is no resting state to linearise.`] };
@@ -44,11 +43,4 @@ export function dualSiteOf(prepared: PreparedPlan): DualSiteAnswer {
     },
     notes: ['Attenuation is at DC, gates following, linearised at the operating point with no clamp active.'],
   };
-}
-
-/** The steady state at the holding levels, whatever initial voltage the plan gives. */
-function operatingPointOf(prepared: PreparedPlan): OperatingPoint {
-  if (prepared.plan.initial === undefined) return prepared.start();
-  const { grid, kinetics, temperature, step } = prepared;
-  return operatingPoint({ grid, kinetics, temperature, pipettes: heldPipettes(prepared), step });
 }

@@ -8,9 +8,8 @@ import type { LaidSweep } from '../protocol/sweeps.ts';
 import { rungsOf } from '../protocol/ladder.ts';
 import { clampBandwidth } from '../rig/pipette.ts';
 import { frozenVoltages, type LevelledClamp } from '../solver/frozen.ts';
-import { operatingPoint } from '../solver/operating-point.ts';
 import { preparePlan, type PreparedPlan } from '../solver/prepare.ts';
-import { heldPipettes } from '../solver/start.ts';
+import { operatingPointOf } from '../solver/start.ts';
 import { steadyMembrane } from '../solver/steady-membrane.ts';
 import { controlFrom, inputResistance, steadyTree } from '../solver/steady.ts';
 import { fromSi, toSi, type Volt } from '../units/si.ts';
@@ -117,12 +116,12 @@ function referenceHolding(prepared: PreparedPlan): Volt {
 
 /** Without a voltage clamp there is nothing to control; what is left is the cell itself at the first pipette. */
 function freeEstimate(prepared: PreparedPlan, memory: EstimateMemory): PassiveEstimate {
-  const { grid, kinetics, temperature, plan, step } = prepared;
-  const site = prepared.pipettes[0]?.compartment ?? 0;
-  const pipettes = heldPipettes(prepared);
-  const key = JSON.stringify([plan.cell, pipettes.map(({ holding, compartment }) => [holding, compartment])]);
+  const { grid, kinetics, temperature, plan, pipettes } = prepared;
+  const site = pipettes[0]?.compartment ?? 0;
+  const holdings = plan.protocol.lanes.map(({ pipette, holding }) => [pipette, holding]);
+  const key = JSON.stringify([plan.cell, holdings, pipettes.map(({ compartment }) => compartment)]);
   const known = memory.rest?.key === key ? memory.rest.V : undefined;
-  const V = known ?? operatingPoint({ grid, kinetics, temperature, pipettes, step }).state.V;
+  const V = known ?? operatingPointOf(prepared).state.V;
   memory.rest = { key, V };
   const tree = steadyTree(grid, steadyMembrane(grid, kinetics, temperature, V).chord);
   return {

@@ -3,7 +3,8 @@ import type { Grid } from '../cell/grid.ts';
 import type { Kinetics } from '../channels/kinetics.ts';
 import type { PlanDocument } from '../contract/documents.ts';
 import { toSi, type Second } from '../units/si.ts';
-import { operatingPoint, type HeldPipette } from './operating-point.ts';
+import { atRest } from './at-rest.ts';
+import { operatingPoint, type HeldPipette, type OperatingPoint } from './operating-point.ts';
 import type { SolverPipette, SweepState } from './run.ts';
 
 export interface Start {
@@ -42,19 +43,33 @@ export function startOf(input: StartInput): Start {
   return { state: { V }, firesOnItsOwn: false, notes };
 }
 
-/** The pipettes at the levels their lanes are held at. */
-export function heldPipettes(input: Pick<StartInput, 'plan' | 'pipettes'>): HeldPipette[] {
-  return input.pipettes.map((pipette) => {
-    const lane = input.plan.protocol.lanes.find((candidate) => candidate.pipette === pipette.letter);
-    return { ...pipette, holding: lane === undefined ? 0 : toSi(lane.holding, lane.unit) };
-  });
-}
-
 function atOperatingPoint(input: StartInput): Start {
-  const { grid, kinetics, temperature, step } = input;
-  const { state, firesOnItsOwn } = operatingPoint({ grid, kinetics, temperature, pipettes: heldPipettes(input), step });
+  const { state, firesOnItsOwn } = operatingPointOf(input);
   const notes = firesOnItsOwn
     ? ['The cell fires on its own at the holding levels: each sweep starts at the same moment of that activity.']
     : ['Sweeps start at the operating point: the steady state at the holding levels.'];
   return { state, firesOnItsOwn, notes };
+}
+
+/** Where several states are stable, the one reached from here counts. */
+const searchStart = -0.07;
+
+/**
+ * The steady state at the holding levels, whatever initial voltage the plan gives.
+ *
+ * @throws Refusal as `operatingPoint`.
+ */
+export function operatingPointOf(input: Omit<StartInput, 'initialIndex'>): OperatingPoint {
+  const { grid, kinetics, temperature, step } = input;
+  const held = { grid, kinetics, temperature, pipettes: heldPipettes(input), step };
+  const V = atRest(held, searchStart);
+  return V === undefined ? operatingPoint(held) : { state: { V }, firesOnItsOwn: false };
+}
+
+/** The pipettes at the levels their lanes are held at. */
+function heldPipettes(input: Pick<StartInput, 'plan' | 'pipettes'>): HeldPipette[] {
+  return input.pipettes.map((pipette) => {
+    const lane = input.plan.protocol.lanes.find((candidate) => candidate.pipette === pipette.letter);
+    return { ...pipette, holding: lane === undefined ? 0 : toSi(lane.holding, lane.unit) };
+  });
 }
