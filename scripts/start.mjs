@@ -1,8 +1,6 @@
 // npm start: builds what is missing, then opens the window; npm start -- NOTEBOOK opens that one.
 import { existsSync } from 'node:fs';
 import { join, resolve } from 'node:path';
-import { startElectron } from './electron-start.mjs';
-import { buildIfStale } from './fresh-build.mjs';
 import { needNewerNode, projectFolder } from './newer-node.mjs';
 
 const help = `npm start -- [--browser] [NOTEBOOK.holdfast]
@@ -12,6 +10,9 @@ const help = `npm start -- [--browser] [NOTEBOOK.holdfast]
 Without a notebook the one in the program's own folder opens; HOLDFAST_HOME names another folder.`;
 
 needNewerNode();
+// TypeScript, which an old Node could not read.
+const { startElectron } = await import('./electron-start.ts');
+const { buildIfStale } = await import('./fresh-build.ts');
 process.exitCode = await start(process.argv.slice(2));
 
 async function start(args) {
@@ -38,7 +39,7 @@ async function start(args) {
   if (!flags.includes('--browser')) {
     const started = await startElectron(notebook);
     if ('code' in started) return started.code;
-    console.log(`Using a browser instead of Electron: ${started.obstacle}.`);
+    console.log(`Using a browser, not Electron: ${started.obstacle}.`);
   }
   const { runBrowserShell } = await import('../out/main/browser.mjs');
   await runBrowserShell(notebook[0]);

@@ -4,11 +4,12 @@ import { spawnSync } from 'node:child_process';
 import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { buildIfStale } from './fresh-build.mjs';
 import { needNewerNode, projectFolder } from './newer-node.mjs';
 
 needNewerNode();
-const { chromiumObstacle } = await import('./test-chromium.mjs');
+// TypeScript, which an old Node could not read.
+const { buildIfStale } = await import('./fresh-build.ts');
+const { chromiumObstacle } = await import('./test-chromium.ts');
 const { passed, failed, skipped } = run();
 console.log(`\n${passed} passed, ${failed} failed${skipped > 0 ? `, ${skipped} skipped` : ''}`);
 process.exitCode = failed > 0 ? 1 : 0;

@@ -1,11 +1,11 @@
 // Real Electron windows for tests.
-import { spawn, type ChildProcess } from 'node:child_process';
 import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { tmpdir } from 'node:os';
 import { dirname, join, resolve } from 'node:path';
 import { _electron, type ElectronApplication, type Page } from 'playwright-core';
 import { complaintsOf } from './chromium.ts';
+import { mayHaveDisplay, type Display } from './display.ts';
 
 /** The runtime's program: in the folder that ELECTRON_RUNTIME names, else in the installed package; null for none. */
 function runtime(): string | null {
@@ -17,35 +17,11 @@ function runtime(): string | null {
   return program !== null && existsSync(program) ? program : null;
 }
 
-const hasXvfb = (): boolean =>
-  (process.env['PATH'] ?? '').split(':').some((folder) => existsSync(join(folder, 'Xvfb')));
-const hasDisplay = (): boolean =>
-  process.platform !== 'linux' || Boolean(process.env['DISPLAY'] || process.env['WAYLAND_DISPLAY']);
-
 /** Why there can be no window on this machine; null where there can. */
 export function whyNoWindow(): string | null {
   if (runtime() === null) return 'no Electron runtime: ELECTRON_RUNTIME names none and the electron package holds none';
-  if (!hasDisplay() && !hasXvfb()) return 'no display, and no Xvfb to make one';
+  if (!mayHaveDisplay()) return 'no display, and no Xvfb to make one';
   return null;
-}
-
-export interface Display {
-  readonly name: string | undefined;
-  readonly close: () => void;
-}
-
-/** The machine's display, or one that nobody sees. */
-export async function openDisplay(): Promise<Display> {
-  if (hasDisplay()) return { name: process.env['DISPLAY'], close: () => undefined };
-  // It chooses a free number itself and writes it to the third stream.
-  const server: ChildProcess = spawn('Xvfb', ['-displayfd', '3', '-screen', '0', '1920x1080x24', '-nolisten', 'tcp'], {
-    stdio: ['ignore', 'ignore', 'ignore', 'pipe'],
-  });
-  const number = await new Promise<string>((done, fail) => {
-    server.stdio[3]?.once('data', (digits: Buffer) => done(digits.toString().trim()));
-    server.once('exit', (code) => fail(new Error(`Xvfb ended with code ${String(code)}`)));
-  });
-  return { name: `:${number}`, close: () => void server.kill() };
 }
 
 // Playwright can hang for ever when it attaches while a window is already loading, so the application waits for a word

@@ -4,9 +4,6 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
 
-/** Time for a browser to start and read the page that sends it on. */
-const handover_ms = 60_000;
-
 export interface AppWindow {
   /** How it ended, for people. */
   readonly ended: Promise<string>;
@@ -15,12 +12,14 @@ export interface AppWindow {
 
 /**
  * Opens an address in a window without browser furniture. Every user of the computer can read a command line, and the
- * address lets its reader in: so the browser is pointed at a file that only this user can read, which sends it on.
+ * address lets its reader in: so the browser is pointed at a file that only this user can read, which sends it on and is
+ * gone once it has.
  */
-export function openAppWindow(browser: string, address: string): AppWindow {
+export function openAppWindow(browser: string, newAddress: (onUse: () => void) => string): AppWindow {
   // The browser's own profile, too: one that already runs would take the window over, and never end.
   const folder = mkdtempSync(join(tmpdir(), 'holdfast-window-'));
   const page = join(folder, 'open.html');
+  const address = newAddress(() => rmSync(page, { force: true }));
   writeFileSync(page, redirectPage(address), { mode: 0o600 });
   const child = spawn(
     browser,
@@ -37,13 +36,11 @@ export function openAppWindow(browser: string, address: string): AppWindow {
     // Browsers chatter on stderr.
     { stdio: 'ignore' },
   );
-  const removal = setTimeout(() => rmSync(page, { force: true }), handover_ms);
   const ended = new Promise<string>((resolve) => {
     child.once('error', (cause) => resolve(cause.message));
     child.once('exit', (code, signal) => resolve(signal ?? `exit code ${String(code)}`));
   });
   void ended.then(() => {
-    clearTimeout(removal);
     // Helper processes may still be writing to the profile.
     rmSync(folder, { recursive: true, force: true, maxRetries: 10, retryDelay: 100 });
   });

@@ -6,7 +6,7 @@ import { defaultNotebook } from '../home.ts';
 import { startWithNode } from '../start-with-node.ts';
 import { openAppWindow, type AppWindow } from './app-window.ts';
 import { findBrowser, hasDisplay } from './find-browser.ts';
-import { serve } from './server.ts';
+import { serve, type Served } from './server.ts';
 
 /** How long a last save may take when all tabs are closed. */
 const lastWord_ms = 1500;
@@ -41,14 +41,14 @@ export async function runBrowserShell(notebook: string | undefined): Promise<voi
   client.stop();
 }
 
-function openWindow(newAddress: () => string): AppWindow | null {
+function openWindow(newAddress: Served['newAddress']): AppWindow | null {
   if (!hasDisplay()) return null;
   const browser = findBrowser();
   if (!browser) {
     console.log('No browser of the Chromium family was found (CHROMIUM may name one).');
     return null;
   }
-  const window = openAppWindow(browser, newAddress());
+  const window = openAppWindow(browser, newAddress);
   const opened = Date.now();
   void window.ended.then((how) => {
     if (Date.now() - opened < 5000) console.log(`${browser} opened no window (${how}).`);

@@ -27,8 +27,8 @@ export interface ServeOptions {
 export interface Served {
   /** "http://127.0.0.1:PORT/", good for nothing without a code. */
   readonly address: string;
-  /** The address with a fresh code, which opens one tab, once. */
-  readonly newAddress: () => string;
+  /** The address with a fresh code, which opens one tab, once. Calls back when that happens. */
+  readonly newAddress: (onUse?: () => void) => string;
   /** Settles once the server has closed, by `close` or because no tab is left. */
   readonly closed: Promise<void>;
   readonly close: () => Promise<void>;
@@ -122,7 +122,7 @@ export async function serve({ pages, client, startFolder, linger_ms = 60_000 }: 
     return closed;
   }
   const address = `http://${host}/`;
-  return { address, newAddress: () => `${address}#${tabs.newCode()}`, closed, close };
+  return { address, newAddress: (onUse = () => undefined) => `${address}#${tabs.newCode(onUse)}`, closed, close };
 }
 
 const tooLarge: Answer = {

@@ -20,20 +20,24 @@ const mostUnsent = 64;
  * bits, so looking one up by its value gives nothing away.
  */
 export class Tabs {
-  readonly #codes = new Set<string>();
+  readonly #codes = new Map<string, () => void>();
   readonly #tabs = new Map<string, Tab>();
   readonly #wrongCodes = new Allowance({ atOnce: 20, perSecond: 0.2 });
   #onLastClosed: () => void = () => undefined;
 
-  newCode(): string {
+  /** Calls back when the code is used. */
+  newCode(onUse: () => void): string {
     const code = random();
-    this.#codes.add(code);
+    this.#codes.set(code, onUse);
     return code;
   }
 
   /** The new tab's secret; 'wrong' for a code that is not open any more or never was, 'too many' after many of those. */
   enter(code: string): { readonly secret: string } | 'wrong' | 'too many' {
-    if (!this.#codes.delete(code)) return this.#wrongCodes.take() ? 'wrong' : 'too many';
+    const onUse = this.#codes.get(code);
+    if (!onUse) return this.#wrongCodes.take() ? 'wrong' : 'too many';
+    this.#codes.delete(code);
+    onUse();
     const secret = random();
     this.#tabs.set(secret, {
       requests: new Allowance({ atOnce: 300, perSecond: 100 }),

@@ -6,7 +6,8 @@ import { join, resolve } from 'node:path';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
 import { bundle } from '../../../scripts/bundle.ts';
 import { buildBridgePage } from '../../support/bridge-page.ts';
-import { openDisplay, openElectron, whyNoWindow, type Display, type Opened } from '../../support/electron.ts';
+import { openDisplay, type Display } from '../../support/display.ts';
+import { openElectron, whyNoWindow, type Opened } from '../../support/electron.ts';
 
 const obstacle = whyNoWindow();
 let folder: string;
