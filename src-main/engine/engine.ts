@@ -8,7 +8,7 @@ import { Refusal } from '../units/refuse.ts';
 import { workerProgram } from './beside.ts';
 import { Desk } from './desk.ts';
 import { makeExampleNotebook } from './examples.ts';
-import { handlers, type Answered } from './handlers.ts';
+import { handlers } from './handlers.ts';
 import { Pool } from './pool.ts';
 import { checkedQuestion, refuseName } from './question.ts';
 
@@ -56,7 +56,7 @@ export function createEngine(options: EngineOptions = {}): Engine {
     try {
       await ready;
       const { name } = call;
-      return { ok: true, value: isAnswered(name) ? await answer(name, call.question, desk) : refuseName(name) };
+      return { ok: true, value: isRequest(name) ? await answer(name, call.question, desk) : refuseName(name) };
     } catch (error) {
       if (error instanceof Refusal) return { ok: false, refusals: listOf(error) };
       log(stackOf(error, call.name));
@@ -79,11 +79,11 @@ export function createEngine(options: EngineOptions = {}): Engine {
   };
 }
 
-function isAnswered(name: string): name is Answered {
+function isRequest(name: string): name is RequestName {
   return Object.hasOwn(handlers, name);
 }
 
-function answer<N extends Answered>(name: N, question: unknown, desk: Desk): Answers[N] | Promise<Answers[N]> {
+function answer<N extends RequestName>(name: N, question: unknown, desk: Desk): Answers[N] | Promise<Answers[N]> {
   return handlers[name](checkedQuestion(name, question), desk);
 }
 

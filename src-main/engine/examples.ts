@@ -51,14 +51,22 @@ async function fill(desk: Desk, notebook: Notebook): Promise<void> {
     .filter((name) => name.endsWith('.plan.json'))
     .toSorted();
   const sessions = new Map<number, number>();
+  let shown: FirstShown | null = null;
   for (const file of files) {
     const plan = readPlanWhole(join(folder, file));
     const cellId = keepCell(notebook, written(plan.cell));
     const planId = createPlan(notebook, cellId, written(plan), written(plan.cell));
     const sessionId = sessions.get(cellId) ?? exampleSession(notebook, cellId);
     sessions.set(cellId, sessionId);
-    if (file === firstShown) await rehearseFirst(desk, notebook, { planId, sessionId, plan });
+    if (file === firstShown) shown = { planId, sessionId, plan };
   }
+  if (shown) await rehearseFirst(desk, notebook, shown);
+}
+
+interface FirstShown {
+  readonly planId: number;
+  readonly sessionId: number;
+  readonly plan: PlanDocument;
 }
 
 function exampleSession(notebook: Notebook, cellId: number): number {
@@ -68,12 +76,7 @@ function exampleSession(notebook: Notebook, cellId: number): number {
   return sessionId;
 }
 
-async function rehearseFirst(
-  desk: Desk,
-  notebook: Notebook,
-  first: { readonly planId: number; readonly sessionId: number; readonly plan: PlanDocument },
-): Promise<void> {
-  const { planId, sessionId, plan } = first;
+async function rehearseFirst(desk: Desk, notebook: Notebook, { planId, sessionId, plan }: FirstShown): Promise<void> {
   const documents = writtenPlan(plan);
   await rehearseInto(desk, notebook, { jobId: 'example', planId, sessionId, documents });
   change(notebook, () => keepSetting(notebook, 'open plan', String(planId)));

@@ -18,6 +18,7 @@ export interface FinerRun {
   readonly forecast: Forecast;
 }
 
+/** Tells by a `numerical` event that a rehearsal's uncertainty is settled: read it again, it may have stayed pending. */
 export class FinerRuns {
   readonly #pool: Pool;
   readonly #emit: (event: EngineEvent) => void;
@@ -61,31 +62,38 @@ export class FinerRuns {
   #next(): void {
     const [run] = this.#waiting;
     if (!run || this.#paused || this.#stopped || this.#running) return;
-    const nothing = () => undefined;
     const sent = { ...run.sent, finer: true };
-    const running = startRun(this.#pool, sent, run.sweeps, { onProgress: nothing, onSweep: nothing });
+    const jobId = `finer-${run.rehearsalId}`;
+    const running = startRun(this.#pool, sent, run.sweeps, {
+      onProgress: (done, left_s) =>
+        this.#emit({ event: 'progress', jobId, what: 'numerical uncertainty', done, left_s }),
+      onSweep: () => undefined,
+    });
     this.#running = running;
-    running.outcome
-      .then((outcome) => {
-        if (outcome.kind === 'cancelled') return;
-        const done = this.#waiting.shift();
-        if (outcome.kind === 'finished') this.#keep(done ?? run, outcome.forecast);
-      })
-      .catch((cause: unknown) => {
-        // The rehearsal stands without it; its uncertainty stays pending. The log keeps the reason.
-        this.#waiting.shift();
-        if (!this.#stopped) console.error(`finer run of rehearsal ${run.rehearsalId}:`, cause);
-      })
-      .finally(() => {
-        this.#running = null;
-        this.#next();
-      });
+    void this.#finish(running).finally(() => {
+      this.#running = null;
+      this.#next();
+    });
+  }
+
+  /** Keeps what the first waiting run found, unless it was cut short: then it waits on. */
+  async #finish(running: Run): Promise<void> {
+    try {
+      const outcome = await running.outcome;
+      if (outcome.kind === 'cancelled' || this.#stopped) return;
+      const [run] = this.#waiting;
+      if (run && outcome.kind === 'finished') this.#keep(run, outcome.forecast);
+    } catch (cause) {
+      // The rehearsal stands without it; its uncertainty stays pending. The log keeps the reason.
+      if (!this.#stopped) console.error('finer run:', cause);
+    }
+    const settled = this.#waiting.shift();
+    if (settled) this.#emit({ event: 'numerical', rehearsalId: settled.rehearsalId });
   }
 
   #keep(run: FinerRun, fine: Forecast): void {
     // The user may have gone on with another notebook meanwhile.
     if (!run.notebook.db.open) return;
     storeNumerical(run.notebook, run.rehearsalId, numericalUncertainty(run.forecast, fine));
-    this.#emit({ event: 'numerical', rehearsalId: run.rehearsalId });
   }
 }

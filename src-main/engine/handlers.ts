@@ -7,12 +7,9 @@ import { planHandlers } from './handlers/plan.ts';
 import { rehearsalHandlers } from './handlers/rehearsal.ts';
 import { sessionHandlers } from './handlers/session.ts';
 
-/** Requests that are answered. */
-export type Answered = Exclude<RequestName, 'export traces' | 'export forecast' | 'export figure'>;
-
-/** One for every request: one that is missing does not compile. Refusals are thrown. */
+/** One for every request of the contract: one that is missing does not compile. Refusals are thrown. */
 export type Handlers = {
-  readonly [N in Answered]: (question: CheckedQuestion<N>, desk: Desk) => Answers[N] | Promise<Answers[N]>;
+  readonly [N in RequestName]: (question: CheckedQuestion<N>, desk: Desk) => Answers[N] | Promise<Answers[N]>;
 };
 
 export const handlers: Handlers = {

@@ -1,11 +1,12 @@
 // What worker threads can be asked to do. Each piece is pure: the same question gives the same answer in any thread.
 import type { RefusalData } from '../contract/refusal.ts';
 import type { CellDocument, PlanDocument, Site } from '../contract/documents.ts';
-import type { Answers, PlanCheck } from '../contract/requests.ts';
-import type { CellDrawing, Forecast, PassiveEstimate, Trace } from '../contract/results.ts';
+import type { Answers, PlanCheck, TextFile } from '../contract/requests.ts';
+import type { CellDrawing, Forecast, PassiveEstimate, StoredRehearsal, Trace } from '../contract/results.ts';
 import type { RehearsedSweep } from '../forecast/sweep-rehearsal.ts';
 import { checkPlan } from './work/check.ts';
 import { cellDrawing } from './work/drawing.ts';
+import { figure, traceTables } from './work/export-texts.ts';
 import { gather } from './work/gather.ts';
 import { importCell } from './work/import-cell.ts';
 import { estimate } from './work/estimate.ts';
@@ -50,6 +51,16 @@ export interface Works {
     part: never;
     answer: CellDrawing;
   };
+  'trace tables': {
+    question: { readonly plan: { readonly name: string }; readonly traces: readonly Trace[] };
+    part: never;
+    answer: readonly TextFile[];
+  };
+  figure: {
+    question: { readonly stored: Pick<StoredRehearsal, 'summary' | 'protocol'>; readonly traces: readonly Trace[] };
+    part: never;
+    answer: TextFile;
+  };
   'import cell': {
     question: { readonly name: string; readonly bytes: Uint8Array };
     part: never;
@@ -75,6 +86,8 @@ const works: { readonly [N in WorkName]: (question: WorkQuestion<N>, hooks: Work
   check: checkPlan,
   estimate,
   drawing: cellDrawing,
+  'trace tables': traceTables,
+  figure,
   'import cell': importCell,
 };
 
