@@ -24,10 +24,13 @@ export interface Workspace {
   readonly whole: Float64Array;
 }
 
-/** Allocates a sweep's workspace and puts the cell and its pipettes at the start. */
+/** Allocates a sweep's workspace and puts the cell and its pipettes at the start. Throws where a compartment is not of the grid. */
 export function workspaceOf(input: SweepInput, step: Second): Workspace {
   const { grid, start } = input;
   const { count } = grid;
+  for (const c of [...input.pipettes.map(({ compartment }) => compartment), ...input.probes]) {
+    if (!(c >= 0 && c < count)) throw new Error(`compartment ${c} is not one of the grid's ${count}`);
+  }
   const electrodes = electrodesOf(input.pipettes, start);
   const membrane = membraneOf({ ...input, advances: [step, step / 2], spacing: input.tableSpacing ?? defaultSpacing });
   const fixedD = new Float64Array(count);

@@ -45,26 +45,25 @@ export function smallGrid(compartments: readonly SmallCompartment[], reversals_m
   };
 }
 
-/** A sealed cylinder of `pieces` compartments from x = 0, passive. Lengths in µm, Rm Ω·cm², Ri Ω·cm, Cm µF/cm². */
-export function cylinder(
-  pieces: number,
-  c: {
-    readonly d_um: number;
-    readonly length_um: number;
-    readonly Rm_ohm_cm2: number;
-    readonly Ri_ohm_cm: number;
-    readonly Cm_uF_cm2: number;
-    readonly rest_mV: number;
-  },
-): Grid {
+export interface Cable {
+  readonly d_um: number;
+  readonly length_um: number;
+  readonly Rm_ohm_cm2: number;
+  readonly Ri_ohm_cm: number;
+  readonly Cm_uF_cm2: number;
+  readonly rest_mV: number;
+}
+
+/** A sealed passive cylinder in `pieces` equal parts: compartment k is centred at x = k·length/pieces, the ends are halves. */
+export function cylinder(pieces: number, c: Cable): Grid {
   const dx = c.length_um / pieces;
-  // Ri·dx/(π d²/4), in nS: µm²/(Ω·cm·µm) = 1e-8 cm²/(1e-4 cm Ω·cm) = 1e-4 S = 1e5 nS.
+  // π·d²/(4·Ri·dx), µm²/(Ω·cm·µm) = 1e-8 cm²/(1e-4 Ω·cm²) = 1e-4 S = 1e5 nS.
   const coupling_nS = (1e5 * (Math.PI * c.d_um ** 2)) / (4 * c.Ri_ohm_cm * dx);
   return smallGrid(
-    Array.from({ length: pieces }, (_, k) => ({
+    Array.from({ length: pieces + 1 }, (_, k) => ({
       parent: k - 1,
       coupling_nS,
-      area_um2: Math.PI * c.d_um * dx,
+      area_um2: Math.PI * c.d_um * dx * (k === 0 || k === pieces ? 0.5 : 1),
       capacitance_uF_cm2: c.Cm_uF_cm2,
       channels: { leak: 1e3 / c.Rm_ohm_cm2 },
     })),
@@ -112,4 +111,10 @@ export function sweepOf(
 export function finished(result: SweepResult): SweepOutput {
   if (result.kind !== 'done') throw new Error(`the sweep ended as ${result.kind}`);
   return result;
+}
+
+/** The largest difference between two courses of equal length; NaN where one has it. */
+export function largestDifference(a: Float64Array, b: Float64Array): number {
+  if (a.length !== b.length) throw new Error(`courses of ${a.length} and ${b.length} values`);
+  return a.reduce((most, value, i) => Math.max(most, Math.abs(value - b[i]!)), 0);
 }
