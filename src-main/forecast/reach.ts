@@ -12,15 +12,16 @@ export function reachOf(grid: Pick<Grid, 'count' | 'area'>, error: Float64Array,
   return shareOf(grid.area, error, tolerance);
 }
 
-/** The same by region; a compartment on a border counts in each by the area it has there. Regions without area: NaN. */
+/** The same by region; a compartment on a border counts in each by the area it has there. Regions without area are left out. */
 export function reachByRegion(
   grid: Pick<Grid, 'regionNames' | 'regionArea'>,
   error: Float64Array,
   tolerance: Volt,
 ): { readonly region: string; readonly area: SquareMetre; readonly reach: number }[] {
-  return grid.regionNames.map((region, r) => {
+  return grid.regionNames.flatMap((region, r) => {
     const area = grid.regionArea[r] ?? new Float64Array();
-    return { region, area: sum(area), reach: shareOf(area, error, tolerance) };
+    const total = sum(area);
+    return total === 0 ? [] : [{ region, area: total, reach: shareOf(area, error, tolerance) }];
   });
 }
 
