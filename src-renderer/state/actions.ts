@@ -4,6 +4,7 @@ import { area, areas } from './area.svelte.ts';
 import { camera } from './camera.svelte.ts';
 import { cursor } from './cursor.svelte.ts';
 import { estimate } from './estimate.svelte.ts';
+import { chooseNotebook } from './files.ts';
 import { notebook } from './notebook.svelte.ts';
 import { overlays } from './overlays.svelte.ts';
 import { placeProbe } from './probes.ts';
@@ -64,19 +65,19 @@ export const actions: readonly Action[] = [
     words: 'New notebook',
     key: '',
     group: 'Notebook',
-    run: () => overlays.show({ kind: 'choose notebook', what: 'new' }),
+    run: () => void chooseNotebook('new'),
   },
   {
     words: 'Open a notebook',
     key: '',
     group: 'Notebook',
-    run: () => overlays.show({ kind: 'choose notebook', what: 'open' }),
+    run: () => void chooseNotebook('open'),
   },
   {
     words: 'Save the notebook under another name',
     key: '',
     group: 'Notebook',
-    run: () => overlays.show({ kind: 'choose notebook', what: 'save as' }),
+    run: () => void chooseNotebook('save as'),
   },
   { words: 'Import a traced cell', key: '', group: 'Notebook', run: () => swcImport.choose() },
   { words: 'Make a cell', key: '', group: 'Notebook', run: () => overlays.show({ kind: 'generate cell' }) },

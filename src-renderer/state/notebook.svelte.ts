@@ -56,6 +56,16 @@ class NotebookState {
     await this.createPlan({ ...plan.document, name: `${plan.document.name}, copy` }, plan.cellId);
   }
 
+  /** Gives a plan another name; of the open one it can be undone like any change. */
+  async renamePlan(planId: number, name: string): Promise<void> {
+    if (planId === plan.planId) {
+      plan.change(`name ${plan.document.name} → ${name}`, (p) => ({ ...p, name }));
+      await plan.keep();
+    }
+    await askOrSay('plan name', { planId, name });
+    await this.load(false);
+  }
+
   async removePlan(planId: number, name: string): Promise<void> {
     if ((await askOrSay('plan remove', { planId, removed: true })) === null) return;
     await this.load(plan.planId === planId);
