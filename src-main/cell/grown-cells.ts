@@ -8,10 +8,14 @@ const apical = 4;
 const goldenAngle = Math.PI * (3 - Math.sqrt(5));
 
 /**
- * Soma 20 µm; apical trunk 650 to 750 µm from 4 to 2 µm across, with obliques and a tuft; six to eight basal trees; the
+ * 8 to 12 mm of dendrites. Soma 20 µm; apical trunk 650 to 750 µm from 4 to 2 µm across, with obliques and a tuft; six to eight basal trees; the
  * first 200 µm of an axon.
  */
 export function pyramidal(stream: Stream): Growth {
+  return grownWithin(() => growPyramidal(stream), [8000, 12_000]);
+}
+
+function growPyramidal(stream: Stream): Growth {
   const growth = new Growth(stream, 10);
   growTrunk(growth);
   const trees = 6 + Math.floor(stream.unit() * 3);
@@ -90,8 +94,12 @@ function growTrunk(growth: Growth): void {
   });
 }
 
-/** Soma 15 µm, five or six smooth dendrites to all sides, the first 150 µm of an axon. */
+/** 3 to 5 mm of dendrites. Soma 15 µm, five or six smooth dendrites to all sides, the first 150 µm of an axon. */
 export function interneuron(stream: Stream): Growth {
+  return grownWithin(() => growInterneuron(stream), [3000, 5000]);
+}
+
+function growInterneuron(stream: Stream): Growth {
   const growth = new Growth(stream, 7.5);
   const trees = 5 + Math.floor(stream.unit() * 2);
   const turn = stream.between(0, 2 * Math.PI);
@@ -118,8 +126,12 @@ export function interneuron(stream: Stream): Growth {
   return growth;
 }
 
-/** Soma 10 µm, a cone of spiny dendrites 250 to 350 µm high on one side, the first 120 µm of an axon on the other. */
+/** 1.5 to 4 mm of dendrites. Soma 10 µm, a cone of spiny dendrites 250 to 350 µm high on one side, the first 120 µm of an axon on the other. */
 export function granule(stream: Stream): Growth {
+  return grownWithin(() => growGranule(stream), [1500, 4000]);
+}
+
+function growGranule(stream: Stream): Growth {
   const growth = new Growth(stream, 5);
   const trees = 2 + Math.floor(stream.unit() * 2);
   const turn = stream.between(0, 2 * Math.PI);
@@ -152,4 +164,13 @@ export function round(stream: Stream): Growth {
 function growAxon(growth: Growth, direction: Vector, length: number): Tip {
   const stem = growth.stem(axon, direction, 0.6);
   return growth.run(stem, { type: axon, length, from: 0.6, to: 0.4, wander: 0.07, pull: [0, -0.03, 0] });
+}
+
+/** Grows again, on with the same stream, until the dendrites' length, µm, lies within the range the kind claims. */
+function grownWithin(grow: () => Growth, [least, most]: readonly [number, number]): Growth {
+  for (;;) {
+    const growth = grow();
+    const length = growth.lengthOf(dendrite) + growth.lengthOf(apical);
+    if (length >= least && length <= most) return growth;
+  }
 }

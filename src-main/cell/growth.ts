@@ -49,6 +49,15 @@ export class Growth {
     return this.samples.length - 1;
   }
 
+  /** Length of the neurites of one type, µm. */
+  lengthOf(type: number): number {
+    return this.samples.reduce((length, { type: own, point, parent }) => {
+      const above = this.samples[parent];
+      if (own !== type || above === undefined || above.type === 1) return length;
+      return length + Math.hypot(...sum(point, scaled(above.point, -1)));
+    }, 0);
+  }
+
   /** A stem's first sample, on the soma's surface. */
   stem(type: number, direction: Vector, radius: number): Tip {
     const unit = normalised(direction);

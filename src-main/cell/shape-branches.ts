@@ -126,6 +126,12 @@ type Identity = Pick<ShapeBranch, 'branch' | 'parent' | 'parentAt' | 'startDista
 
 function runBranch(run: readonly number[], samples: readonly SwcSample[], identity: Identity): ShapeBranch {
   const points = run.map((i) => samples[i]!);
+  const xyz = new Float64Array(3 * points.length);
+  points.forEach((p, n) => {
+    xyz[3 * n] = toSi(p.x, 'um');
+    xyz[3 * n + 1] = toSi(p.y, 'um');
+    xyz[3 * n + 2] = toSi(p.z, 'um');
+  });
   const at = new Float64Array(points.length);
   for (let n = 1; n < points.length; n += 1) {
     const step = gap(points[n]!, points[n - 1]!);
@@ -139,7 +145,7 @@ function runBranch(run: readonly number[], samples: readonly SwcSample[], identi
     parentAt,
     startDistance,
     isSoma,
-    xyz: Float64Array.from(points.flatMap((p) => [toSi(p.x, 'um'), toSi(p.y, 'um'), toSi(p.z, 'um')])),
+    xyz,
     radius: Float64Array.from(points, (p) => toSi(p.radius, 'um')),
     at,
     type: Int32Array.from(points, (p, n) => (n === 0 ? (points[1] ?? p).type : p.type)),

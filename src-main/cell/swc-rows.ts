@@ -25,6 +25,8 @@ export interface SwcRows {
 // Tokens are tested before they are converted: Number('') is 0 and Number('0x3C') is 60.
 const decimal = /^[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?$/;
 const integer = /^[+-]?\d+$/;
+// A byte-order mark inside the text is no blank, as it is for trim() and \s: it would hide where two files were joined.
+const blanks = /[^\S\ufeff]+/;
 const integerAsDecimal = /^[+-]?\d+\.0*$/;
 
 /**
@@ -33,14 +35,14 @@ const integerAsDecimal = /^[+-]?\d+\.0*$/;
  * @throws SwcFault `E_COLUMNS`, `E_NUMBER`, `E_INTEGER`, `E_ID`, `E_DUPLICATE_ID`, `E_LIMIT` with the first bad line,
  *         `E_EMPTY` without any sample.
  */
-export function readRows(text: string, findings: Findings): SwcRows {
+export function readRows(text: string, findings: Findings, most = mostSamples): SwcRows {
   const rows: SwcRow[] = [];
   const byId = new Map<string, SwcRow>();
   const header: string[] = [];
   let line = 0;
   for (const written of linesOf(text)) {
     line += 1;
-    let words = written.trim();
+    let words = trimmed(written);
     if (words.startsWith('#')) {
       if (rows.length === 0) header.push(written);
       continue;
@@ -49,7 +51,7 @@ export function readRows(text: string, findings: Findings): SwcRows {
     const comment = words.indexOf('#');
     if (comment >= 0) {
       findings.note('W_INLINE_COMMENT', line);
-      words = words.slice(0, comment).trim();
+      words = trimmed(words.slice(0, comment));
     }
     if (rows.length === 0 && /^\p{L}/u.test(words)) {
       findings.note('W_HEADER_ROW', line);
@@ -62,7 +64,7 @@ export function readRows(text: string, findings: Findings): SwcRows {
       findings.note('W_DUPLICATE_ROW', line);
       continue;
     }
-    if (rows.length >= mostSamples) throw new SwcFault('E_LIMIT', line);
+    if (rows.length >= most) throw new SwcFault('E_LIMIT', line);
     byId.set(row.id, row);
     rows.push(row);
   }
@@ -100,14 +102,25 @@ function rowOf(columns: readonly string[], line: number, findings: Findings): Sw
 function columnsOf(words: string, line: number, findings: Findings): string[] {
   if (words.includes(';')) {
     findings.note('W_SEPARATOR', line);
-    return words.split(';').map((part) => part.trim());
+    return words.split(';').map(trimmed);
   }
-  const parts = words.split(',').map((part) => part.trim());
+  if (!words.includes(',')) return words.split(blanks);
+  const parts = words.split(',').map(trimmed);
   if (parts.length > 6 && !parts.some((part) => /\s/.test(part))) {
     findings.note('W_SEPARATOR', line);
     return parts;
   }
-  return words.split(/\s+/);
+  return words.split(blanks);
+}
+
+/** Without blanks at both ends. By hand: a regular expression would take forever on a line of a million blanks. */
+function trimmed(text: string): string {
+  const isBlank = (at: number) => text[at] !== '\ufeff' && text[at]?.trim() === '';
+  let from = 0;
+  let to = text.length;
+  while (isBlank(from)) from += 1;
+  while (to > from && isBlank(to - 1)) to -= 1;
+  return text.slice(from, to);
 }
 
 /** A whole number in canonical form: "+07" and "7.0" are "7", "-0" is "0". */
