@@ -6,27 +6,32 @@ export interface Axis {
 }
 
 /**
- * An axis over a range of values: three to five ticks at 1, 2 or 5 times a power of ten, the ends padded by 6 %. A range
- * of no width is opened to ±1.
+ * An axis over a range of values: the finest ticks at 1, 2 or 5 times a power of ten of which at most five fit, the ends
+ * padded by 6 %. A range of no width is opened to ±1.
  */
 export function axisOver(low: number, high: number, padding = 0.06): Axis {
   const width = high - low;
   if (!(width > 0)) return axisOver(low - 1, low + 1, 0);
   const from = low - padding * width;
   const to = high + padding * width;
-  const step = roundStep((to - from) / 4);
-  const first = Math.ceil(from / step - 1e-9);
-  const last = Math.floor(to / step + 1e-9);
-  // One product and one rounding to the step's decimals: 0.1·3 must read 0.3.
-  const decimals = Math.max(0, -Math.floor(Math.log10(step)));
-  const ticks = Array.from({ length: last - first + 1 }, (_, i) => Number(((first + i) * step).toFixed(decimals)));
-  return { low: from, high: to, ticks };
+  let exponent = Math.floor(Math.log10(to - from)) - 1;
+  for (;;) {
+    for (const part of [1, 2, 5]) {
+      const ticks = ticksEvery(part, exponent, from, to);
+      if (ticks.length <= mostTicks) return { low: from, high: to, ticks };
+    }
+    exponent += 1;
+  }
 }
 
-function roundStep(rough: number): number {
-  const power = 10 ** Math.floor(Math.log10(rough));
-  const part = rough / power;
-  if (part <= 1) return power;
-  if (part <= 2) return 2 * power;
-  return part <= 5 ? 5 * power : 10 * power;
+const mostTicks = 5;
+
+/** Multiples of part·10^exponent within a range: one product and one rounding to its decimals, so that 0.1·3 reads 0.3. */
+function ticksEvery(part: number, exponent: number, from: number, to: number): number[] {
+  const step = part * 10 ** exponent;
+  const first = Math.ceil(from / step - 1e-9);
+  const last = Math.floor(to / step + 1e-9);
+  return Array.from({ length: last - first + 1 }, (_, i) =>
+    Number(((first + i) * step).toFixed(Math.max(0, -exponent))),
+  );
 }
