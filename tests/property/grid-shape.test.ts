@@ -162,6 +162,19 @@ describe('sites', () => {
     );
   });
 
+  it('uses the centre of a fork for a site nearer than 0.5 µm, and gives a further one its own', () => {
+    const end = lengths[1]!;
+    const near = { branch: 1, at_um: end - 0.4 };
+    const apart = { branch: 1, at_um: end - 0.6 };
+    const placeOf = (site: { branch: number; at_um: number }) => {
+      const grid = cutGrid(passiveCell(pyramidal, numbers), [site]);
+      return grid.at[grid.compartmentAt(site, 'site')]! * 1e6;
+    };
+
+    expect(placeOf(near)).toBeCloseTo(end, 6);
+    expect(placeOf(apart)).toBeCloseTo(end - 0.6, 6);
+  });
+
   it.each([
     [{ branch: 9999, at_um: 0 }, 'rig.pipettes[0].site.branch', 'give a branch from 0 to'],
     [{ branch: 1, at_um: 1e5 }, 'rig.pipettes[0].site.at_um', 'give a distance from 0 to'],
