@@ -26,7 +26,7 @@ export function paintUnder(chart: Canvas, picture: Picture, read: ReadToken): vo
     const b = pixel(chart, shading.axis, shading.to);
     const from = Math.min(a, b);
     const size = Math.max(1, Math.abs(b - a));
-    ctx.fillStyle = faint(read(shading.token), 0.13);
+    ctx.fillStyle = faint(read(shading.token), shading.isFaint === true ? 0.06 : 0.11);
     if (shading.axis === 'x') ctx.fillRect(from, area.top, size, area.height);
     else ctx.fillRect(area.left, from, area.width, size);
     ctx.fillStyle = read('--ink-3');
@@ -35,8 +35,8 @@ export function paintUnder(chart: Canvas, picture: Picture, read: ReadToken): vo
       ctx.textAlign = 'right';
       ctx.fillText(shading.label, from + size - 6, area.bottom - 6);
     } else if (shading.axis === 'y' && size > 16) {
-      ctx.textAlign = 'right';
-      ctx.fillText(shading.label, area.right - 6, Math.max(area.top, from) + 13);
+      ctx.textAlign = 'left';
+      ctx.fillText(shading.label, area.left + 8, Math.min(area.bottom, from + size) - 6);
     }
   }
   for (const mark of picture.marks) {
@@ -88,6 +88,16 @@ function* drawnPoints(chart: Canvas): Generator<{ x: number; y: number }> {
   }
 }
 
+/** What a legend should not cover: the data, and the words at the marks. */
+function* crowd(chart: Canvas, picture: Picture): Generator<{ x: number; y: number }> {
+  yield* drawnPoints(chart);
+  for (const mark of picture.marks) {
+    if (mark.axis !== 'x') continue;
+    const x = pixel(chart, 'x', mark.at);
+    for (const along of [10, 50, 90]) yield { x: x + along, y: chart.chartArea.top + 8 };
+  }
+}
+
 function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
   const { ctx, chartArea: area } = chart;
   const named = picture.series.filter((one) => one.quiet !== true);
@@ -97,7 +107,7 @@ function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
   const height = named.length * 16 + 10;
   if (width > area.width * 0.6 || height > area.height * 0.75) return;
   const plot = { left: area.left, top: area.top, width: area.width, height: area.height };
-  const box = emptiestCorner(drawnPoints(chart), plot, width, height);
+  const box = emptiestCorner(crowd(chart, picture), plot, width, height);
   ctx.fillStyle = faint(read('--panel'), 0.82);
   ctx.fillRect(box.left, box.top, width, height);
   named.forEach((one, i) => {

@@ -43,6 +43,8 @@ function themeReader(element: Element): ReadToken {
 function dataset(series: Series, view: Range, columns: number, read: ReadToken): ChartDataset<'line', Point[]> {
   const colour = paintColour(series.paint, read);
   const pointed = series.drawn !== 'line';
+  // A crowd of points is read as a cloud: smaller ones keep its shape.
+  const radius = pointed ? (series.y.length > 100 ? 1.75 : 2.75) : 0;
   return {
     label: series.label,
     data: pointed
@@ -53,8 +55,8 @@ function dataset(series: Series, view: Range, columns: number, read: ReadToken):
     borderColor: colour,
     borderWidth: lineWidth(series),
     borderDash: dash(series),
-    pointRadius: pointed ? 2.75 : 0,
-    pointHoverRadius: pointed ? 2.75 : 0,
+    pointRadius: radius,
+    pointHoverRadius: radius,
     pointStyle: series.shape ?? 'circle',
     pointBackgroundColor: colour,
     pointBorderColor: colour,
@@ -69,6 +71,7 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
   let picture: Picture | null = null;
   let cursor: Cursor | null = null;
   let read = themeReader(canvas);
+  const steps = { x: 1, y: 1 };
 
   const overlay: Plugin<'line'> = {
     id: 'holdfast',
@@ -95,7 +98,7 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
         x: {
           type: 'linear',
           grid: { drawOnChartArea: false, tickLength: 4 },
-          ticks: { maxRotation: 0, autoSkip: false },
+          ticks: { maxRotation: 0, autoSkip: false, callback: (value) => tickLabel(Number(value), steps.x) },
           // A label that reaches over the end must not move the plot against its neighbours.
           afterFit: (scale) => {
             scale.paddingLeft = 0;
@@ -104,23 +107,19 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
           afterBuildTicks: (scale) => {
             const most = Math.max(2, Math.min(9, Math.floor(scale.width / 64)));
             const step = roundStep({ from: scale.min, to: scale.max }, most);
-            scale.ticks = ticks({ from: scale.min, to: scale.max }, step).map((value) => ({
-              value,
-              label: tickLabel(value, step),
-            }));
+            steps.x = step;
+            scale.ticks = ticks({ from: scale.min, to: scale.max }, step).map((value) => ({ value }));
           },
         },
         y: {
           type: 'linear',
           grid: { tickLength: 0 },
-          ticks: { autoSkip: false, padding: 8 },
+          ticks: { autoSkip: false, padding: 8, callback: (value) => tickLabel(Number(value), steps.y) },
           afterBuildTicks: (scale) => {
             const most = Math.max(2, Math.min(mostGridlines, Math.floor(scale.height / 26)));
             const step = roundStep({ from: scale.min, to: scale.max }, most);
-            scale.ticks = ticks({ from: scale.min, to: scale.max }, step).map((value) => ({
-              value,
-              label: tickLabel(value, step),
-            }));
+            steps.y = step;
+            scale.ticks = ticks({ from: scale.min, to: scale.max }, step).map((value) => ({ value }));
           },
           afterFit: (scale) => {
             scale.width = plotInset.left;

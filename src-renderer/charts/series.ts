@@ -31,6 +31,8 @@ export interface Shading {
   readonly label: string;
   /** Theme colour of the fill. */
   readonly token: string;
+  /** Laid under other shadings. */
+  readonly isFaint?: boolean;
 }
 
 /** One line across the plot: a trust distance, the accepted bias. */

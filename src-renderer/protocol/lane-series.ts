@@ -68,7 +68,7 @@ export function laneSeries(
   });
   return [
     ...others.map(({ lane, rung }) => series(lane, rung, paint(rung), false)),
-    series(selected, selectedRung, paint(selectedRung), true),
+    series(selected, selectedRung, { sweeps: letter === 'A' ? 'a' : 'b', at: 1 }, true),
   ];
 }
 

@@ -9,7 +9,7 @@ export function laneShadings(plan: PlanDocument, sweep: DrawnSweep): Record<stri
     const list: Shading[] = [];
     const judged = lane.unit === 'mV' ? judgedWindow(plan, lane.pipette) : null;
     const span = judged?.lane === lane.pipette ? windowSpan(judged, sweep) : null;
-    if (span) list.push({ axis: 'x', from: span.from_ms, to: span.to_ms, label: 'clamp window', token: '--accent' });
+    if (span) list.push({ axis: 'x', from: span.from_ms, to: span.to_ms, label: '', token: '--accent', isFaint: true });
     for (const reading of plan.protocol.readings) {
       const read = reading.pipette === lane.pipette ? windowSpan(reading.window, sweep) : null;
       const token = lane.pipette === 'A' ? '--a' : '--b';

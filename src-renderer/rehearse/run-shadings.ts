@@ -21,7 +21,14 @@ export function runShadings(
   const judged = forecast?.clamp?.sweeps.find((one) => one.sweep === sweep);
   if (forecast?.clamp && judged) {
     const list = (found[forecast.clamp.pipette] ??= []);
-    list.push({ axis: 'x', from: judged.windowStart_ms, to: judged.windowEnd_ms, label: '', token: '--accent' });
+    list.push({
+      axis: 'x',
+      from: judged.windowStart_ms,
+      to: judged.windowEnd_ms,
+      label: '',
+      token: '--accent',
+      isFaint: true,
+    });
   }
   return found;
 }

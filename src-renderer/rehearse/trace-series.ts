@@ -36,7 +36,8 @@ function hue(letter: PipetteLetter): Paint {
 }
 
 /**
- * One pipette's recording in every sweep, from light to dark along the ladder, the selected one on top. Colours go by the
+ * One pipette's recording in every sweep, from light to dark along the ladder, the selected one on top in
+ * the fullest hue. Colours go by the
  * number of sweeps planned, so that a sweep keeps its colour while others arrive.
  */
 export function recordedFamily(
@@ -57,7 +58,7 @@ export function recordedFamily(
       paint:
         traces.length === 1 && planned === 1
           ? hue(letter)
-          : { sweeps: letter === 'A' ? 'a' : 'b', at: ladderPlace(sweep, planned) },
+          : { sweeps: letter === 'A' ? 'a' : 'b', at: sweep === selected ? 1 : 0.85 * ladderPlace(sweep, planned) },
       stroke: letter === 'A' ? 'solid' : 'dashed',
       selected: sweep === selected,
       quiet: sweep !== selected,
