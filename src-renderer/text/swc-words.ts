@@ -1,6 +1,6 @@
 // The report on an imported tracing in words.
 import type { SwcMeasures, SwcReport } from '../../src-main/contract/results.ts';
-import { figure, figureNumber } from './quantity.ts';
+import { figure } from './quantity.ts';
 
 export const outcomeWords: Record<SwcReport['outcome'], string> = {
   accept: 'Taken as it is.',
@@ -20,16 +20,16 @@ const somaWords: Record<SwcMeasures['soma'], string> = {
 /** Name and value, in the order people ask for them. */
 export function measureRows(m: SwcMeasures): readonly (readonly [string, string])[] {
   return [
-    ['samples in the main tree', `${figureNumber(m.main_tree_samples)} of ${figureNumber(m.samples)}`],
-    ['trees in the file', figureNumber(m.trees)],
+    ['samples in the main tree', `${m.main_tree_samples} of ${m.samples}`],
+    ['trees in the file', String(m.trees)],
     ['soma', somaWords[m.soma]],
     ['soma area', figure(m.soma_area_um2, 'µm²')],
     ['length of the branches', figure(m.neurite_length_um, 'µm', 4)],
     ['area of the branches', figure(m.neurite_area_um2, 'µm²', 4)],
-    ['stems', figureNumber(m.stem_count)],
-    ['branches', figureNumber(m.branch_count)],
-    ['branch points', figureNumber(m.branch_point_count)],
-    ['tips', figureNumber(m.tip_count)],
+    ['stems', String(m.stem_count)],
+    ['branches', String(m.branch_count)],
+    ['branch points', String(m.branch_point_count)],
+    ['tips', String(m.tip_count)],
   ];
 }
 
