@@ -5,7 +5,7 @@ import type { Answer, Answers, Call, EngineEvent, EngineMessage, Question, Reque
 export interface EngineProcess {
   send(call: Call): void;
   onMessage(listener: (message: EngineMessage) => void): void;
-  /** `how` is for people: "exit code 1". Called once. */
+  /** `how` is for people: "exit code 1". Each listener is called once. */
   onExit(listener: (how: string) => void): void;
   stop(): void;
 }
@@ -16,6 +16,7 @@ export type StartEngine = (notebookPath: string) => EngineProcess;
 /** More restarts than this within a minute mean that restarting does not help. */
 const mostRestarts = 3;
 const minute_ms = 60_000;
+const patience_ms = 4000;
 
 const changesNotebook: ReadonlySet<string> = new Set<RequestName>([
   'notebook create',
@@ -79,11 +80,18 @@ export class EngineClient {
     while (this.#waiting.size > 0 && this.#now() < end) await new Promise((resolve) => setTimeout(resolve, 20));
   }
 
-  /** Ends the engine for good. */
-  stop(): void {
+  /** Ends the engine for good; settles when it has gone, so that its notebook is free, or after a few seconds. */
+  async stop(): Promise<void> {
     this.#stopped = true;
-    this.#engine?.stop();
+    const engine = this.#engine;
     this.#lose();
+    if (!engine) return;
+    const gone = new Promise<void>((done) => {
+      engine.onExit(() => done());
+      setTimeout(done, patience_ms).unref();
+    });
+    engine.stop();
+    await gone;
   }
 
   #launch(): void {

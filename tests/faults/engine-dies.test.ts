@@ -9,7 +9,7 @@ class PlayedEngine implements EngineProcess {
   readonly notebookPath: string;
   readonly calls: Call[] = [];
   say: (message: EngineMessage) => void = () => undefined;
-  die: (how: string) => void = () => undefined;
+  readonly #mourners: ((how: string) => void)[] = [];
   wasStopped = false;
 
   constructor(notebookPath: string) {
@@ -22,7 +22,10 @@ class PlayedEngine implements EngineProcess {
     this.say = listener;
   }
   onExit(listener: (how: string) => void): void {
-    this.die = listener;
+    this.#mourners.push(listener);
+  }
+  die(how: string): void {
+    for (const mourner of this.#mourners.splice(0)) mourner(how);
   }
   stop(): void {
     this.wasStopped = true;
@@ -101,18 +104,32 @@ describe('the line to the engine', () => {
   it('does not start again what was stopped on purpose', async () => {
     const { client, engines, events, last } = played();
     const asked = client.relay('plan open', {});
-    client.stop();
+    const end = client.stop();
     last().die('SIGTERM');
+    await end;
     expect(await asked).toEqual(stopped);
     expect(await client.relay('plan open', {})).toEqual(stopped);
     expect([engines.length, last().wasStopped, events]).toEqual([1, true, []]);
   });
 
-  it('ignores the late death of an engine that was replaced', () => {
-    const { engines } = played();
-    engines[0]?.die('exit code 1');
-    engines[0]?.die('exit code 1');
-    expect(engines).toHaveLength(2);
+  it('settles its end only when the engine has gone', async () => {
+    const { client, last } = played();
+    let hasEnded = false;
+    const end = client.stop().then(() => (hasEnded = true));
+    await Promise.resolve();
+    expect([last().wasStopped, hasEnded]).toEqual([true, false]);
+    last().die('SIGTERM');
+    await end;
+  });
+
+  it('is quiet when nothing is in flight, or time is up', async () => {
+    const { client, clock, last } = played();
+    await client.quiet(1000);
+    void client.relay('never', {});
+    const quiet = client.quiet(1000);
+    clock.now = 1000;
+    await quiet;
+    expect(last().calls).toHaveLength(1);
   });
 });
 

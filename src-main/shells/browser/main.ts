@@ -38,7 +38,7 @@ export async function runBrowserShell(notebook: string | undefined): Promise<voi
   window?.close();
   await window?.ended;
   await client.quiet(lastWord_ms);
-  client.stop();
+  await client.stop();
 }
 
 function openWindow(newAddress: Served['newAddress']): AppWindow | null {

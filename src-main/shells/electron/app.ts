@@ -128,8 +128,8 @@ async function showNotebook(
 function stopInOrder(client: EngineClient): void {
   app.on('will-quit', (event) => {
     event.preventDefault();
-    void client.quiet(lastWord_ms).then(() => {
-      client.stop();
+    void client.quiet(lastWord_ms).then(async () => {
+      await client.stop();
       // Not quit: one that was held up before is not taken up again in every case.
       app.exit();
     });

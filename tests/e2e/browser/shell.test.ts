@@ -41,7 +41,7 @@ beforeAll(async () => {
 afterAll(async () => {
   await browser?.close();
   await served?.close();
-  client?.stop();
+  await client?.stop();
   rmSync(folder, { recursive: true });
 });
 
