@@ -9,7 +9,7 @@ import { axisOver } from './figure-axis.ts';
 import { curvePath, xOf, yOf, type Frame } from './figure-curve.ts';
 
 const width = 720;
-const margin = { left: 72, right: 96, top: 40, bottom: 44 };
+const margin = { left: 72, right: 96, top: 58, bottom: 44 };
 const panelHeight = { command: 84, recording: 190, membrane: 130 };
 const panelGap = 30;
 const ink = '#191e20';
@@ -23,6 +23,7 @@ const sweepColours: Record<string, readonly [string, string, string]> = {
 };
 /** Milliseconds after a command jump that do not stretch an axis: the capacity transient runs off it and is cut. */
 const transient_ms = 0.3;
+const transientNote = `Within ${transient_ms} ms after a command jump, currents may run off the axis.`;
 
 /**
  * The figure of a rehearsal: a panel per trace key, sweeps from light to dark along the ladder, B dashed, labelled axes
@@ -53,6 +54,9 @@ export function figureSvg(stored: Pick<StoredRehearsal, 'summary' | 'protocol'>,
     ...panels,
     timeAxis(first, last, bottom),
     legend(traces, stored.protocol),
+    traces.some(({ key, unit }) => key.startsWith('recording:') && unit === 'pA')
+      ? text(margin.left, bottom + 36, transientNote, 'start')
+      : '',
   ];
   const face = `font-family="Fira Sans, Helvetica, Arial, sans-serif"`;
   const open = `<svg xmlns="http://www.w3.org/2000/svg" width="${width}" height="${height}" viewBox="0 0 ${width} ${height}" ${face}>`;
@@ -87,11 +91,12 @@ function panel(
   const who = key.slice(key.indexOf(':') + 1);
   const clip = `clip-${key.replace(/[^A-Za-z0-9]/g, '_')}-${frame.top}`;
   const { left, right, top, bottom } = frame;
-  const lines = ticks.flatMap((tick) => {
+  const labels = tickLabels(ticks);
+  const lines = ticks.flatMap((tick, i) => {
     const y = yOf(tick, frame);
     return [
       `<line x1="${left}" x2="${right}" y1="${y.toFixed(2)}" y2="${y.toFixed(2)}" stroke="${grid}"/>`,
-      text(left - 8, y + 4, plain(tick, significant(ticks)), 'end'),
+      text(left - 8, y + 4, labels[i] ?? '', 'end'),
     ];
   });
   const curves = traces.map((trace) => {
@@ -108,11 +113,12 @@ function panel(
   ].join('\n');
 }
 
-/** Digits that tell neighbouring ticks apart. */
-function significant(ticks: readonly number[]): number {
-  const step = (ticks[1] ?? 1) - (ticks[0] ?? 0);
-  const most = Math.max(...ticks.map(Math.abs));
-  return Math.max(1, Math.ceil(Math.log10(most / step + 1e-9)) + 1);
+/** Ticks with as many decimals as the one that needs most: −60 and −100, or −0.5 and 1.0. */
+function tickLabels(ticks: readonly number[]): string[] {
+  const decimals = Math.max(0, ...ticks.map((tick) => (String(tick).split('.')[1] ?? '').length));
+  return ticks.map((tick) =>
+    (Math.abs(tick) < 1e-4 && tick !== 0 ? plain(tick) : tick.toFixed(decimals)).replace('-', '−'),
+  );
 }
 
 function timeAxis(from: number, to: number, bottom: number): string {
@@ -127,10 +133,11 @@ function timeAxis(from: number, to: number, bottom: number): string {
     low: 0,
     high: 1,
   };
-  const ticks = axis.ticks.map((tick) => {
+  const labels = tickLabels(axis.ticks);
+  const ticks = axis.ticks.map((tick, i) => {
     const x = xOf(tick, frame).toFixed(2);
     const mark = `<line x1="${x}" x2="${x}" y1="${bottom}" y2="${bottom + 5}" stroke="${quiet}"/>`;
-    return `${mark}${text(Number(x), bottom + 19, plain(tick, significant(axis.ticks)), 'middle')}`;
+    return `${mark}${text(Number(x), bottom + 19, labels[i] ?? '', 'middle')}`;
   });
   const line = `<line x1="${frame.left}" x2="${frame.right}" y1="${bottom}" y2="${bottom}" stroke="${quiet}"/>`;
   return [line, ...ticks, text(frame.right, bottom + 36, 'time, ms', 'end', 12, ink)].join('\n');
