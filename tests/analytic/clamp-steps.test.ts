@@ -56,6 +56,38 @@ describe('clamp step through access resistance', () => {
   });
 });
 
+describe('clamp steps on squid membrane while its gates move', () => {
+  it('are of second order too, through 30 MΩ from 12.5 µs on, in voltage and current, on regular steps and off them', () => {
+    const grid = smallGrid([{ parent: -1, area_um2: 1000, channels: squidChannels }], squidReversals);
+    // The second jump finds sodium half activated; the third falls between regular steps.
+    const command = steps('mV', 12, [
+      [0, -70],
+      [5, -20],
+      [5.4, -45],
+      [6.0037, -60],
+    ]);
+    const courses = [12.5e-6, 6.25e-6, 3.125e-6, 1.5625e-6].map((step) => {
+      const run = sweepOf({
+        ...{ grid, kinetics: squidKinetics, start: allAt(grid, -70), duration: 0.012, probes: [0] },
+        pipettes: [pipette('voltage clamp', command, { access: 30e6 })],
+        ...{ sampling: 25e-6, step, tableSpacing: 1e-5 },
+      });
+      return finished(runSweep(run));
+    });
+    // After the first jump, and 0.25 ms and later after the last.
+    for (const sample of [216, 250, 260, 300, 400]) {
+      const changes = (of: (run: (typeof courses)[0]) => number): number[] =>
+        courses.slice(1).map((run, i) => Math.abs(of(run) - of(courses[i]!)));
+      for (const seen of [
+        changes(({ membrane }) => membrane[0]![sample]!),
+        changes(({ current }) => current[0]![sample]!),
+      ]) {
+        for (const order of observedOrders(seen)) expect(order, `sample ${sample}`).toBeGreaterThan(1.8);
+      }
+    }
+  });
+});
+
 describe('no ringing after a jump of 100 mV, steps of 25 µs', () => {
   const cells = {
     'a round cell of 20 pF': smallGrid([{ parent: -1, area_um2: 2000, channels: { leak: 0.05 } }], { leak: -70 }),
