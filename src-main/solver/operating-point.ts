@@ -101,19 +101,21 @@ function letGoFrom(input: OperatingInput, found: Float64Array): SweepState {
     ...(input.cancelled === undefined ? {} : { cancelled: input.cancelled }),
   });
   if (result.kind === 'done') return result.end;
-  if (result.kind === 'cancelled') {
-    return refuse('job-cancelled', {
-      thing: 'search for the operating point',
-      place: 'before the first sweep',
-      value: 'cancelled',
-      remedy: 'start again when wanted',
-    });
-  }
+  if (result.kind === 'cancelled') return refuseCancelled();
   return refuse('run-diverged', {
     thing: 'membrane voltage',
     place: `before the first sweep, t = ${(result.time * 1e3).toPrecision(4)} ms, compartment ${result.compartment}`,
     value: 'not a finite number',
     remedy: "look at that compartment's channels and rates",
+  });
+}
+
+function refuseCancelled(): never {
+  return refuse('job-cancelled', {
+    thing: 'search for the operating point',
+    place: 'before the first sweep',
+    value: 'cancelled',
+    remedy: 'start again when wanted',
   });
 }
 
@@ -134,6 +136,7 @@ function steadyVoltages(input: OperatingInput, from: Float64Array): Float64Array
   let pace: Second = 1e-4;
   let lastRate = Infinity;
   for (let iteration = 0; iteration < mostIterations; iteration++) {
+    if (input.cancelled?.() === true) refuseCancelled();
     const { current, slope } = steadyMembrane(grid, kinetics, temperature, V);
     for (let k = 0; k < count; k++) {
       D[k] = slope[k]! + capacitance[k]! / pace;
