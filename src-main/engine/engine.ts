@@ -9,7 +9,7 @@ import { workerProgram } from './beside.ts';
 import { Desk } from './desk.ts';
 import { makeExampleNotebook } from './examples.ts';
 import { handlers } from './handlers.ts';
-import { Pool } from './pool.ts';
+import { deathRefusal, Pool, WorkerDeath } from './pool.ts';
 import { checkedQuestion, refuseName } from './question.ts';
 
 export interface EngineOptions {
@@ -59,6 +59,7 @@ export function createEngine(options: EngineOptions = {}): Engine {
       return { ok: true, value: isRequest(name) ? await answer(name, call.question, desk) : refuseName(name) };
     } catch (error) {
       if (error instanceof Refusal) return { ok: false, refusals: listOf(error) };
+      if (error instanceof WorkerDeath) return { ok: false, refusals: [deathRefusal(error)] };
       log(stackOf(error, call.name));
       return { ok: false, fault: error instanceof Error ? error.message : String(error) };
     }

@@ -1,5 +1,6 @@
 // Worker threads and what is waiting for them. A worker that dies is replaced and its piece of work done once more.
 import { Worker } from 'node:worker_threads';
+import type { RefusalData } from '../contract/refusal.ts';
 import { Refusal } from '../units/refuse.ts';
 import type { FromWorker, ToWorker } from './worker-messages.ts';
 import type { WorkAnswer, WorkName, WorkPart, WorkQuestion } from './work.ts';
@@ -22,6 +23,17 @@ export interface Wishes<N extends WorkName> {
 /** A worker died twice over the same piece of work. */
 export class WorkerDeath extends Error {
   override readonly name = 'WorkerDeath';
+}
+
+/** What a person is told of it. */
+export function deathRefusal(cause: WorkerDeath): RefusalData {
+  return {
+    code: 'worker-stopped',
+    thing: 'worker',
+    place: 'engine',
+    value: `stopped twice over the same work: ${cause.message}`,
+    remedy: 'try again with fewer compartments or shorter sweeps; the notebook is whole',
+  };
 }
 
 interface Piece {
@@ -114,7 +126,8 @@ export class Pool {
   }
 
   #hire(seat: Seat): Worker {
-    const worker = new Worker(this.#options.program);
+    // Without the options of this process: one that runs a program from its command line would run that again.
+    const worker = new Worker(this.#options.program, { execArgv: [] });
     let last = 'it ended by itself';
     worker.on('message', (message: FromWorker) => this.#hear(seat, message));
     worker.on('error', (cause) => {

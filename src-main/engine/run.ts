@@ -2,7 +2,7 @@
 import type { PlanDocument } from '../contract/documents.ts';
 import type { RefusalData } from '../contract/refusal.ts';
 import type { Forecast } from '../contract/results.ts';
-import { WorkerDeath, type Pool } from './pool.ts';
+import { deathRefusal, WorkerDeath, type Pool } from './pool.ts';
 import { Progress } from './progress.ts';
 import type { SentPlan, SentSweep, WorkAnswer } from './work.ts';
 
@@ -55,21 +55,20 @@ export function startRun(pool: Pool, sent: SentPlan, count: number, wishes: RunW
         return answer;
       }),
   );
-  const swept = Promise.all(pieces).then(
-    async (answers): Promise<RunOutcome> => {
+  const swept = Promise.all(pieces)
+    .then(async (answers): Promise<RunOutcome> => {
       const ending = worstOf(answers);
       if (ending.kind === 'stopped') return ending;
       if (ending.kind === 'cancelled') return { kind: 'cancelled', sweepsDone: arrived.size };
       const sweeps = [...arrived.values()].toSorted((a, b) => a.sweep - b.sweep);
       const forecast = await pool.run('long', 'gather', { sent, sweeps: sweeps.map(withoutTraces) });
       return { kind: 'finished', sweeps, forecast };
-    },
-    (cause: unknown): RunOutcome => {
+    })
+    .catch((cause: unknown): RunOutcome => {
       Atomics.store(flag, 0, 1);
       if (cause instanceof WorkerDeath) return { kind: 'stopped', refusal: deathRefusal(cause) };
       throw cause;
-    },
-  );
+    });
   return {
     outcome: Promise.race([cancelled, swept]).finally(() => progress.end()),
     cancel: () => {
@@ -94,14 +93,4 @@ function worstOf(answers: readonly WorkAnswer<'sweeps'>[]): WorkAnswer<'sweeps'>
     answers.find(({ kind }) => kind === 'stopped') ??
     answers.find(({ kind }) => kind === 'cancelled') ?? { kind: 'done' }
   );
-}
-
-function deathRefusal(cause: WorkerDeath): RefusalData {
-  return {
-    code: 'worker-stopped',
-    thing: 'worker',
-    place: 'rehearsal',
-    value: `stopped twice over the same sweep: ${cause.message}`,
-    remedy: 'rehearse again with fewer compartments or a shorter sweep; the notebook is whole',
-  };
 }

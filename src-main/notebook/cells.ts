@@ -1,21 +1,22 @@
 import { cellSchema, type CellDocument } from '../contract/documents.ts';
 import { change, type Notebook } from './open.ts';
-import { missingRecord, readBack, type Written } from './written.ts';
+import { hashOf, missingRecord, readBack, type Written } from './written.ts';
 
 /** Keeps a cell; one that is there already, letter for letter, is not doubled, and comes back when it was removed. */
 export function keepCell(notebook: Notebook, cell: Written<CellDocument>): number {
+  const hash = hashOf(cell.text);
   return change(notebook, (now) => {
     const there = notebook.db
-      .prepare<[string], { id: number }>('SELECT cell_id AS id FROM cell WHERE draft = ? ORDER BY removed, cell_id')
-      .get(cell.text);
+      .prepare<[string], { id: number }>('SELECT cell_id AS id FROM cell WHERE hash = ? ORDER BY removed, cell_id')
+      .get(hash);
     if (there) {
       notebook.db.prepare('UPDATE cell SET removed = 0 WHERE cell_id = ?').run(there.id);
       return there.id;
     }
     const { name, note } = cell.document;
     const made = notebook.db
-      .prepare('INSERT INTO cell (name, note, draft, changed_at) VALUES (?, ?, ?, ?)')
-      .run(name, note, cell.text, now);
+      .prepare('INSERT INTO cell (name, note, draft, hash, changed_at) VALUES (?, ?, ?, ?, ?)')
+      .run(name, note, cell.text, hash, now);
     return Number(made.lastInsertRowid);
   });
 }
@@ -30,8 +31,8 @@ export function readCell(notebook: Notebook, cellId: number): CellDocument {
 export function updateCell(notebook: Notebook, cellId: number, cell: Written<CellDocument>, now: string): void {
   const { name, note } = cell.document;
   notebook.db
-    .prepare('UPDATE cell SET name = ?, note = ?, draft = ?, changed_at = ? WHERE cell_id = ?')
-    .run(name, note, cell.text, now, cellId);
+    .prepare('UPDATE cell SET name = ?, note = ?, draft = ?, hash = ?, changed_at = ? WHERE cell_id = ?')
+    .run(name, note, cell.text, hashOf(cell.text), now, cellId);
 }
 
 /** Hides a cell with its plans, or brings it back. @throws Refusal `notebook-record-missing`. */

@@ -17,9 +17,11 @@ CREATE TABLE cell (
   name TEXT NOT NULL,
   note TEXT NOT NULL,
   draft TEXT NOT NULL,
+  hash TEXT NOT NULL CHECK (length(hash) = 64),
   changed_at TEXT NOT NULL,
   removed INTEGER NOT NULL DEFAULT 0 CHECK (removed IN (0, 1))
 ) STRICT;
+CREATE INDEX cell_by_hash ON cell (hash);
 
 CREATE TABLE plan (
   plan_id INTEGER PRIMARY KEY,
