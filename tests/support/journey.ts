@@ -20,6 +20,8 @@ async function figures(page: Page): Promise<string[]> {
 
 /** Opens the plan, rehearses it, and gives the figures of its answer. */
 export async function rehearse(page: Page): Promise<string[]> {
+  // The first start shows a rehearsed example, which takes a moment to come.
+  await figures(page);
   await plan(page).click();
   await answer(page).getByText('when the plan is rehearsed').waitFor();
   await page.getByRole('banner', { name: 'Plan' }).getByRole('button', { name: 'Rehearse' }).click();

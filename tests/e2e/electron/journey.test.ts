@@ -13,6 +13,7 @@ let display: Display;
 let home: string;
 beforeAll(async () => {
   home = mkdtempSync(join(tmpdir(), 'holdfast-journey-'));
+  mkdirSync('test-results', { recursive: true });
   if (obstacle === null) display = await openDisplay();
 });
 afterAll(() => {
@@ -25,11 +26,11 @@ async function opened<T>(what: (page: Page) => Promise<T>): Promise<T> {
   const window = await openElectron({ main: 'out-smoke/main/main-smoke.cjs', display, home });
   try {
     const result = await what(window.page);
-    mkdirSync('test-results', { recursive: true });
-    await window.page.screenshot({ path: 'test-results/electron.png' });
     expect(window.complaints).toEqual([]);
     return result;
   } finally {
+    // To look at when something failed.
+    await window.page.screenshot({ path: 'test-results/electron-journey.png' });
     await window.close();
   }
 }
