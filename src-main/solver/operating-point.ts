@@ -177,7 +177,9 @@ function steadyVoltages(input: OperatingInput, from: Float64Array): Float64Array
     for (let k = 0; k < count; k++) V[k] = V[k]! + share * R[k]!;
     if (move < settled && pace > 1) return V;
     const rate = move / pace;
-    pace *= share < 1 ? 1 : Math.min(4, Math.max(0.5, lastRate / rate));
+    // Nothing moves: there is no rate to go by, and none is needed.
+    if (move < settled) pace *= 4;
+    else if (share === 1) pace *= Math.min(4, Math.max(0.5, lastRate / rate));
     lastRate = rate;
   }
   return refuse('run-diverged', {
