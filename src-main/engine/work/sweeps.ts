@@ -3,6 +3,7 @@ import { rehearseSweep } from '../../forecast/rehearse.ts';
 import type { PreparedPlan } from '../../solver/prepare.ts';
 import type { SweepState } from '../../solver/run.ts';
 import { plain } from '../../units/format.ts';
+import { Refusal } from '../../units/refuse.ts';
 import type { WorkAnswer, WorkHooks, WorkQuestion } from '../work.ts';
 import { prepared } from './prepared.ts';
 
@@ -11,6 +12,16 @@ export function sweeps(
   { sent, sweeps: wanted }: WorkQuestion<'sweeps'>,
   hooks: WorkHooks<'sweeps'>,
 ): WorkAnswer<'sweeps'> {
+  try {
+    return inOrder({ sent, sweeps: wanted }, hooks);
+  } catch (error) {
+    // Cancelled while its start was searched for, where there is no sweep yet to answer for.
+    if (error instanceof Refusal && error.data.code === 'job-cancelled') return { kind: 'cancelled' };
+    throw error;
+  }
+}
+
+function inOrder({ sent, sweeps: wanted }: WorkQuestion<'sweeps'>, hooks: WorkHooks<'sweeps'>): WorkAnswer<'sweeps'> {
   const plan = prepared(sent);
   const { carryOver } = sent.plan.protocol;
   let before: SweepState | undefined;
