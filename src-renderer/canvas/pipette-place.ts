@@ -10,7 +10,7 @@ export interface PipettePlace {
 
 export const headRadius = 10;
 /** Room at the edge for the head and its two lines of text. */
-const margin = { x: 16, top: 62, bottom: 132 };
+const margin = { x: 16, top: 62, bottom: 152 };
 const reach_px = 98;
 
 /** A comes from the lower left, B from the upper right; near an edge they turn aside rather than leave the picture. */

@@ -20,7 +20,7 @@ import { projected } from './projected.ts';
 
 const font = '"Fira Sans", sans-serif';
 /** Room around a fitted cell: for labels at the sides, the title above, legend and switch below. */
-const fitMargin = { x: 36, top: 56, bottom: 112 };
+const fitMargin = { x: 36, top: 56, bottom: 104 };
 
 export class Scene {
   size = $state.raw<Size>({ width: 0, height: 0 });

@@ -105,7 +105,7 @@ export function finalFigures(forecast: Forecast): readonly Figure[] {
 function numericalWords(numerical: Forecast['numerical']): Pick<Figure, 'value' | 'after'> {
   if (numerical.state === 'pending') return { value: 'pending', after: '' };
   if (numerical.clampError_mV !== null) {
-    return { value: `±${figure(Math.abs(numerical.clampError_mV), 'mV', 1)}`, after: '' };
+    return { value: `±${figure(Math.abs(numerical.clampError_mV), 'mV', 2)}`, after: '' };
   }
   return { value: 'none to state', after: '' };
 }

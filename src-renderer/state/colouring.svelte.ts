@@ -141,11 +141,11 @@ function largest(values: Float64Array): number {
   return values.reduce((best, v) => (v > best ? v : best), -Infinity);
 }
 
-/** The next of 1, 2, 5 × a power of ten, so that the scale ends on a round figure. */
+/** The next round figure, so that the scale ends on one. */
 function roundUp(value: number): number {
   if (!(value > 0) || !Number.isFinite(value)) return 1;
   const decade = 10 ** Math.floor(Math.log10(value));
-  return ([1, 2, 5, 10].find((m) => m * decade >= value * (1 - 1e-9)) ?? 10) * decade;
+  return ([1, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10].find((m) => m * decade >= value * (1 - 1e-9)) ?? 10) * decade;
 }
 
 export const colouring = new ColouringState();

@@ -168,7 +168,7 @@ describe('picking', () => {
         fc.integer({ min: 0, max: 500 }),
         fc.constantFrom('A', 'B'),
         (x, y, letter) => {
-          const place = pipettePlace(letter as 'A' | 'B', { x, y }, size);
+          const place = pipettePlace(letter, { x, y }, size);
           expect(place.head.x).toBeGreaterThanOrEqual(10);
           expect(place.head.x).toBeLessThanOrEqual(size.width - 10);
           expect(pickPipette([place], place.head.x, place.head.y)).toBe(letter);
