@@ -149,7 +149,7 @@ export function openPlot(canvas: HTMLCanvasElement): Plot {
           ...(scale.ticks as object),
           color: read('--ink-2'),
           font,
-          display: key === 'y' || picture.bareX !== true,
+          display: picture.series.length > 0 && (key === 'y' || picture.bareX !== true),
         },
       });
     }

@@ -26,7 +26,7 @@ export function newBlock(kind: BlockKind, id: string, level: number, holding: nu
 
 /** What stands in the block's box, from short to shortest; the first that fits is shown. */
 export function blockLabels(block: Block, unit: 'mV' | 'pA', rungs: number | null): string[] {
-  if (rungs !== null) return [`${block.kind}, ladder of ${rungs}`, `ladder of ${rungs}`, `× ${rungs}`];
+  if (rungs !== null) return [`${block.kind}, ladder of ${rungs}`, `ladder of ${rungs}`, 'ladder'];
   switch (block.kind) {
     case 'hold':
       return ['hold'];

@@ -106,9 +106,16 @@ export function voltageSeries(sweep: SweepTraces): Series[] {
   return series;
 }
 
-/** Injected currents of one sweep: the commands of pipettes in current clamp. */
+function varies(trace: Trace): boolean {
+  const first = trace.values[0];
+  return trace.values.some((value) => value !== first);
+}
+
+/** Injected currents of one sweep: the commands of pipettes in current clamp, where they are not the same throughout. */
 export function injectedSeries(sweep: SweepTraces): { series: Series[]; unit: string } {
-  const traces = [...sweep].filter(([key, trace]) => key.startsWith('command:') && trace.unit === 'pA');
+  const traces = [...sweep].filter(
+    ([key, trace]) => key.startsWith('command:') && trace.unit === 'pA' && varies(trace),
+  );
   const scaling = scalingOf(traces.map(([, trace]) => trace));
   const series = traces.map(([key, trace]) => {
     const letter = key.endsWith('B') ? 'B' : 'A';
