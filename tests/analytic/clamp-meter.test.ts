@@ -69,6 +69,11 @@ describe('clamp meter', () => {
     expect(worst[0]).toBe(0);
   });
 
+  it('does not count as settling what was over before the block began', () => {
+    const before = (t: number): number => (t < 0.009_95 ? 0.02 : 0);
+    expect(measure([before], { window: { from: 0.008, to: 0.03 } }).settling[0]).toBe(0);
+  });
+
   it('takes the last time the tolerance is exceeded, not the first', () => {
     const twice = (t: number): number => (t < 0.012 || (t > 0.02 && t < 0.0221) ? 0.01 : 0);
     expect(measure([twice]).settling[0]).toBeCloseTo(0.0121 - 0.00005, 4);
