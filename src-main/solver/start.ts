@@ -3,7 +3,6 @@ import type { Grid } from '../cell/grid.ts';
 import type { Kinetics } from '../channels/kinetics.ts';
 import type { PlanDocument } from '../contract/documents.ts';
 import { toSi, type Second } from '../units/si.ts';
-import { atRest } from './at-rest.ts';
 import { operatingPoint, type HeldPipette, type OperatingPoint } from './operating-point.ts';
 import type { SolverPipette, SweepState } from './run.ts';
 
@@ -51,9 +50,6 @@ function atOperatingPoint(input: StartInput): Start {
   return { state, firesOnItsOwn, notes };
 }
 
-/** Where several states are stable, the one reached from here counts. */
-const searchStart = -0.07;
-
 /**
  * The steady state at the holding levels, whatever initial voltage the plan gives.
  *
@@ -61,9 +57,7 @@ const searchStart = -0.07;
  */
 export function operatingPointOf(input: Omit<StartInput, 'initialIndex'>): OperatingPoint {
   const { grid, kinetics, temperature, step } = input;
-  const held = { grid, kinetics, temperature, pipettes: heldPipettes(input), step };
-  const V = atRest(held, searchStart);
-  return V === undefined ? operatingPoint(held) : { state: { V }, firesOnItsOwn: false };
+  return operatingPoint({ grid, kinetics, temperature, pipettes: heldPipettes(input), step });
 }
 
 /** The pipettes at the levels their lanes are held at. */
