@@ -1,4 +1,5 @@
-// What each figure means, its formula, and who says so. Shown beside the figure; the engine's own notes are nearer the code.
+// What each figure means, its formula, and who says so (references from memory). Shown beside the figure; the engine's own
+// notes are nearer the code.
 
 export interface Definition {
   readonly title: string;
