@@ -8,12 +8,15 @@ import { notebook } from './notebook.svelte.ts';
 import { notices } from './notices.svelte.ts';
 import { plan } from './plan.svelte.ts';
 import { rehearsal } from './rehearsal.svelte.ts';
+import { isoDay } from '../text/dates.ts';
 
 export function connect(): void {
   plan.whenChanged((document) => {
     drawing.follow(document);
     estimate.follow(document);
   });
+  rehearsal.sessionNow = () => notebook.sessionOf(isoDay(new Date()));
+  rehearsal.whenStored = () => void notebook.load(false);
   bridge.onEvent((event) => {
     jobs.hear(event);
     rehearsal.hear(event);

@@ -5,6 +5,8 @@ import { ask } from './ask.ts';
 export interface Job {
   readonly jobId: string;
   readonly what: string;
+  /** What of it is under way: "sweeps", "forecast". */
+  readonly stage: string;
   /** 0 to 1; null before the first word from the engine. */
   readonly done: number | null;
   readonly left_s: number | null;
@@ -15,7 +17,7 @@ class JobsState {
   list = $state.raw<readonly Job[]>([]);
 
   begin(jobId: string, what: string): void {
-    this.list = [...this.list, { jobId, what, done: null, left_s: null, isCancelling: false }];
+    this.list = [...this.list, { jobId, what, stage: '', done: null, left_s: null, isCancelling: false }];
   }
 
   end(jobId: string): void {
@@ -25,7 +27,7 @@ class JobsState {
   hear(event: EngineEvent): void {
     if (event.event !== 'progress') return;
     this.list = this.list.map((job) =>
-      job.jobId === event.jobId ? { ...job, what: event.what, done: event.done, left_s: event.left_s } : job,
+      job.jobId === event.jobId ? { ...job, stage: event.what, done: event.done, left_s: event.left_s } : job,
     );
   }
 

@@ -114,6 +114,11 @@ class NotebookState {
     notices.say(`The notebook goes on in “${status.name}”`);
   }
 
+  /** The open cell's session of that day, if it has one: rehearsals of the day go there. */
+  sessionOf(day: string): number | undefined {
+    return this.openCell?.sessions.find((s) => s.date === day)?.sessionId;
+  }
+
   async createSession(cellId: number, date: string): Promise<number | null> {
     const session = await askOrSay('session create', { cellId, date, title: '' });
     await this.load(false);

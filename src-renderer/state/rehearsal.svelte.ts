@@ -59,6 +59,11 @@ class RehearsalState {
   /** The last rehearsal is of the plan as it stands now; else its figures are yesterday's. */
   readonly isCurrent = $derived(this.last !== null && plan.isOpen && this.#plan === plan.document);
 
+  /** The session that a rehearsal of the open plan belongs to; undefined: none. */
+  sessionNow: () => number | undefined = () => undefined;
+  /** For other state: a rehearsal was stored. */
+  whenStored: () => void = () => undefined;
+
   async start(): Promise<void> {
     if (plan.planId === null || this.isRunning) return;
     const document = plan.document;
@@ -66,7 +71,13 @@ class RehearsalState {
     const jobId = crypto.randomUUID();
     this.state = { kind: 'running', jobId, plan: document, done: 0, left_s: null, sweeps: [] };
     jobs.begin(jobId, 'Rehearsal');
-    const answer = await ask('rehearsal start', { jobId, planId, plan: document });
+    const sessionId = this.sessionNow();
+    const answer = await ask('rehearsal start', {
+      jobId,
+      planId,
+      plan: document,
+      ...(sessionId === undefined ? {} : { sessionId }),
+    });
     jobs.end(jobId);
     if (!this.#isStill(jobId)) return;
     if (!answer.ok) {
@@ -78,6 +89,7 @@ class RehearsalState {
     switch (outcome.kind) {
       case 'finished':
         await this.#fetch(outcome.rehearsalId, document, () => this.#isStill(jobId));
+        this.whenStored();
         if (plan.planId === planId) this.list = (await askOrSay('rehearsal list', { planId })) ?? this.list;
         return;
       case 'cancelled':
