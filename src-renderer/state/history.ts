@@ -42,6 +42,11 @@ export function record<T>(
   const joins = gesture !== null && history.index > 0 && top.gesture === gesture;
   const kept = history.changes.slice(0, joins ? history.index : history.index + 1);
   const before = kept.at(-1) ?? history.changes[0];
+  // A gesture that came back to where it began (Escape) leaves no step, and the very value from before.
+  if (joins && JSON.stringify(value) === JSON.stringify(before.value)) {
+    const [start, ...others] = kept;
+    return start === undefined ? begin(value) : { changes: [start, ...others], index: others.length };
+  }
   const change = { value, words: typeof words === 'string' ? words : words(before.value, value), gesture };
   const [first, ...rest] = [...kept, change].slice(-deepest);
   return first === undefined ? begin(value) : { changes: [first, ...rest], index: rest.length };

@@ -45,6 +45,16 @@ describe('undo and redo', () => {
     expect(present(undone(h))).toBe(12);
   });
 
+  it('a gesture that comes back to where it began is no step, and the value is the very same', () => {
+    const first = { access: 5 };
+    const h = [{ access: 1 }, { access: 12 }, { access: 5 }].reduce(
+      (now, v) => record(now, v, 'x', 'field'),
+      begin(first),
+    );
+    expect(undoWords(h)).toBeNull();
+    expect(present(h)).toBe(first);
+  });
+
   it('two gestures of one name are two steps once the first has ended', () => {
     const h = record(settle(record(begin(1), 2, 'a', 'drag')), 3, 'b', 'drag');
     expect(present(undone(h))).toBe(2);
