@@ -133,7 +133,11 @@ describe('picking', () => {
     const shown = cellModel(drawing, isFlat);
     const camera = fit(extent(shown), size, { yaw: 0, pitch: 0 }, margin);
     const cell = projected(shown, camera, size);
-    const sites = fc.record({ branch: fc.constantFrom(1, 2, 3), share: fc.double({ min: 0.15, max: 1, noNaN: true }) });
+    // Right at a branch point the thicker branch covers the thinner, and is rightly picked.
+    const sites = fc.record({
+      branch: fc.constantFrom(1, 2, 3),
+      share: fc.double({ min: 0.15, max: 0.95, noNaN: true }),
+    });
     fc.assert(
       fc.property(sites, ({ branch: b, share }) => {
         const at_um = share * drawing.branches[b]!.at_um.at(-1)!;
