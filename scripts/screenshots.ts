@@ -60,7 +60,7 @@ try {
 } finally {
   await browser.close();
   await served.close();
-  client.stop();
+  await client.stop();
   rmSync(home, { recursive: true, force: true });
 }
 

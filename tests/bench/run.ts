@@ -4,7 +4,6 @@
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { storedChannels } from '../../src-main/channels/library.ts';
-import type { Kinetics } from '../../src-main/channels/kinetics.ts';
 import { runSweep } from '../../src-main/solver/sweep.ts';
 import type { SweepInput } from '../../src-main/solver/run.ts';
 import { uniformCable } from '../support/uniform-cable.ts';
@@ -16,7 +15,7 @@ const step = 25e-6;
 function cost(count: number, duration: number, active: boolean): number {
   const input: SweepInput = {
     grid: uniformCable({ count, compartmentLength: 20e-6, diameter: 2e-6, axial: 1, active }),
-    kinetics: storedChannels as ReadonlyMap<string, Kinetics>,
+    kinetics: storedChannels,
     temperature: 6.3,
     pipettes: [
       {
