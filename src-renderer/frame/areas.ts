@@ -5,29 +5,27 @@ import PlaceDetails from '../cell/PlaceDetails.svelte';
 import RegionDetails from '../cell/RegionDetails.svelte';
 import RigArea from '../rig/RigArea.svelte';
 import PipetteDetails from '../rig/PipetteDetails.svelte';
+import ForecastArea from '../forecast/ForecastArea.svelte';
+import ForecastDetails from '../forecast/ForecastDetails.svelte';
+import ProtocolArea from '../protocol/ProtocolArea.svelte';
+import ProtocolDetails from '../protocol/ProtocolDetails.svelte';
+import RehearseArea from '../rehearse/RehearseArea.svelte';
+import RehearseDetails from '../rehearse/RehearseDetails.svelte';
 import type { Area } from '../state/area.svelte.ts';
 import type { Selection } from '../state/selection.svelte.ts';
 
-// Areas of their own folder: <area>/<Area>Area.svelte and <area>/<Area>Details.svelte, no props.
-const others = import.meta.glob<{ default: Component }>(
-  ['../{protocol,rehearse,forecast}/*Area.svelte', '../{protocol,rehearse,forecast}/*Details.svelte'],
-  { eager: true },
-);
-
-function other(area: 'Protocol' | 'Rehearse' | 'Forecast', part: 'Area' | 'Details'): Component | null {
-  return others[`../${area.toLowerCase()}/${area}${part}.svelte`]?.default ?? null;
-}
-
-export function areaComponent(area: Area): Component | null {
+export function areaComponent(area: Area): Component {
   switch (area) {
     case 'Cell':
       return CellArea;
     case 'Rig':
       return RigArea;
     case 'Protocol':
+      return ProtocolArea;
     case 'Rehearse':
+      return RehearseArea;
     case 'Forecast':
-      return other(area, 'Area');
+      return ForecastArea;
     default:
       return area satisfies never;
   }
@@ -47,11 +45,11 @@ export function detailsComponent(selected: Selection, area: Area): Component | n
       return PlaceDetails;
     case 'lane':
     case 'block':
-      return other('Protocol', 'Details');
+      return ProtocolDetails;
     case 'reading':
-      return other(area === 'Forecast' ? 'Forecast' : 'Protocol', 'Details');
+      return area === 'Forecast' ? ForecastDetails : ProtocolDetails;
     case 'sweep':
-      return other(area === 'Forecast' ? 'Forecast' : 'Rehearse', 'Details');
+      return area === 'Forecast' ? ForecastDetails : RehearseDetails;
     default:
       return selected satisfies never;
   }
