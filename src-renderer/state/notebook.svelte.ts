@@ -14,6 +14,8 @@ class NotebookState {
   /** Null until something is searched for. */
   hits = $state.raw<readonly SearchHit[] | null>(null);
   isLoading = $state(true);
+  /** Counts what was asked to be opened, so that a late answer is known. */
+  #openings = 0;
 
   readonly isReadOnly = $derived(this.overview?.status.readOnly ?? false);
   readonly cells = $derived(this.overview?.cells ?? []);
@@ -33,9 +35,11 @@ class NotebookState {
   }
 
   async openPlan(planId: number): Promise<void> {
+    const ticket = ++this.#openings;
     await plan.keep();
     const opened = await askOrSay('plan open', { planId });
-    if (opened !== null) await this.#show(opened);
+    // The user may have chosen another plan meanwhile: the last choice counts.
+    if (opened !== null && ticket === this.#openings) await this.#show(opened);
   }
 
   /** Keeps a plan as a new one, of the given cell or of a new one, and opens it. */
@@ -46,6 +50,7 @@ class NotebookState {
       cellId === undefined ? { plan: document } : { plan: document, cellId },
     );
     if (opened === null) return;
+    this.#openings++;
     await this.#show(opened);
     await this.load(false);
   }
@@ -140,6 +145,7 @@ class NotebookState {
     cursor.sweep = 0;
     cursor.time_ms = null;
     await rehearsal.showNewest(opened.plan, opened.rehearsals);
+    if (plan.planId !== opened.planId) return;
     const clamp = rehearsal.forecast?.clamp;
     if (clamp) cursor.sweep = clamp.worstSweep;
   }

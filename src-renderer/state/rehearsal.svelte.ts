@@ -1,9 +1,10 @@
 // One run of the plan: started, arriving sweep by sweep, done, or why it did not get there.
 import type { PlanDocument } from '../../src-main/contract/documents.ts';
 import type { RefusalData } from '../../src-main/contract/refusal.ts';
-import type { EngineEvent } from '../../src-main/contract/requests.ts';
+import type { Answer, EngineEvent } from '../../src-main/contract/requests.ts';
 import type {
   Forecast,
+  RehearsalOutcome,
   RehearsalSummary,
   StoredRehearsal,
   SweepArrived,
@@ -11,6 +12,7 @@ import type {
 } from '../../src-main/contract/results.ts';
 import { ask, askOrSay } from './ask.ts';
 import { jobs } from './jobs.svelte.ts';
+import { notices } from './notices.svelte.ts';
 import { planHash } from './plan-hash.ts';
 import { plan } from './plan.svelte.ts';
 
@@ -79,7 +81,10 @@ class RehearsalState {
       ...(sessionId === undefined ? {} : { sessionId }),
     });
     jobs.end(jobId);
-    if (!this.#isStill(jobId)) return;
+    if (!this.#isStill(jobId)) {
+      this.#sayElsewhere(document.name, answer);
+      return;
+    }
     if (!answer.ok) {
       this.state =
         'refusals' in answer ? { kind: 'refused', refusals: answer.refusals } : { kind: 'failed', fault: answer.fault };
@@ -100,6 +105,18 @@ class RehearsalState {
         return;
       default:
         return outcome satisfies never;
+    }
+  }
+
+  /** The window has gone on to another plan: nothing is shown, but what became of the run is said. */
+  #sayElsewhere(name: string, answer: Answer<RehearsalOutcome>): void {
+    if (!answer.ok) {
+      if ('refusals' in answer) notices.refuse(answer.refusals);
+      else notices.fault(`The rehearsal of “${name}” failed: ${answer.fault}. The notebook is whole.`);
+    } else if (answer.value.kind === 'stopped') notices.refuse([answer.value.refusal]);
+    else if (answer.value.kind === 'finished') {
+      notices.say(`The rehearsal of “${name}” is in the notebook`);
+      this.whenStored();
     }
   }
 
