@@ -2,9 +2,18 @@
 import type { ClampForecast, Forecast, ReadingForecast, StoredRehearsal } from '../contract/results.ts';
 import { plain, withUnit } from '../units/format.ts';
 
+/** A millionth: far below the numerical uncertainty of a rehearsal, far above the rounding of its arithmetic. */
+const rounding = 1e-6;
+/** pA, mV, fC: a millionth of it is 0.1 fA, 0.1 µV or less than an electron, whatever the rest of the family. */
+const leastScale = 100;
+
 /**
  * The forecast in some twenty lines: reach, trust distance, access error, their numerical uncertainty, attenuation,
  * recorded against true by sweep, and the notes.
+ *
+ * What is rounding reads as 0: in a reading's table a value below a millionth of the family's largest, recorded or true,
+ * or below 1e-4 of its unit, and a bias below a millionth of the true value; elsewhere an error below a millionth of a millivolt and a share below a
+ * millionth. Where the true value itself is 0 there is no bias. Exports keep all digits.
  */
 export function forecastText({ summary, forecast }: StoredRehearsal): string {
   const { clamp } = forecast;
@@ -30,11 +39,11 @@ function clampLines(clamp: ClampForecast, numerical: Forecast['numerical']): str
       ({ region, area_um2, reach }) => [`  ${region}`, `${percent(reach)} of ${withUnit(area_um2, 'µm²')}`] as const,
     ),
     ['Trust distance', trust === null ? 'to the tips' : `${withUnit(trust, 'µm')} from the soma`],
-    ['Access error', withUnit(clamp.accessError_mV, 'mV')],
+    ['Access error', withUnit(orZero(clamp.accessError_mV, 1), 'mV')],
     [
       'Numerical uncertainty',
       known
-        ? `${withUnit(numerical.clampError_mV, 'mV', 2)} of clamp error, ${percent(numerical.reach)} of reach`
+        ? `${withUnit(orZero(numerical.clampError_mV, 1), 'mV', 2)} of clamp error, ${percent(numerical.reach)} of reach`
         : 'not computed',
     ],
   ];
@@ -53,19 +62,26 @@ function attenuationLines({ dualSite }: Forecast): string[] {
 
 function readingLines(reading: ReadingForecast): string[] {
   const { name, unit, recorded, truth, ladderValue } = reading;
-  // A true value a millionth of the family's largest is rounding: a share of it says nothing.
-  const least = (truth ?? recorded).reduce((most, each) => Math.max(most, Math.abs(each) || 0), 0) * 1e-6;
+  const largest = [...recorded, ...(truth ?? [])].reduce(
+    (most, each) => Math.max(most, Math.abs(each) || 0),
+    leastScale,
+  );
   const rows = Array.from(recorded, (value, i) => {
-    const own = truth?.[i] ?? NaN;
-    const bias = Math.abs(own) > least ? ((value - own) / Math.abs(own)) * 100 : NaN;
-    return [String(i + 1), plain(ladderValue[i] ?? NaN), plain(value), plain(own), plain(bias, 2)];
+    const own = orZero(truth?.[i] ?? NaN, largest);
+    const bias = own === 0 ? NaN : orZero((value - own) / Math.abs(own), 1) * 100;
+    return [String(i + 1), plain(ladderValue[i] ?? NaN), plain(orZero(value, largest)), plain(own), plain(bias, 2)];
   });
   const head = ['sweep', 'ladder', 'recorded', 'true', 'bias %'];
   return [`${name}, ${unit}`, ...[head, ...rows].map((row) => row.map((text) => text.padStart(11)).join('')), ''];
 }
 
+/** The value, or 0 where it is rounding beside `scale`. */
+function orZero(value: number, scale: number): number {
+  return Math.abs(value) < rounding * scale ? 0 : value;
+}
+
 function percent(share: number): string {
-  return withUnit(share * 100, '%', 3);
+  return withUnit(orZero(share, 1) * 100, '%', 3);
 }
 
 function counted(count: number, thing: string): string {

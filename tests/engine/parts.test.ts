@@ -2,7 +2,7 @@
 import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { Forecast, Trace } from '../../src-main/contract/results.ts';
+import type { Forecast, RehearsalSummary, Trace } from '../../src-main/contract/results.ts';
 import { forecastText } from '../../src-main/exchange/forecast-text.ts';
 import { arraysIn } from '../../src-main/engine/arrays-in.ts';
 import { numericalUncertainty } from '../../src-main/engine/numerical.ts';
@@ -123,6 +123,41 @@ describe('numerical uncertainty', () => {
     expect(text).toMatch(/Access error +−3\.00\u2009mV/);
     expect(text).toContain('0.50\u2009mV of clamp error, 3.00\u2009% of reach');
     expect(text).toContain('- A note.');
+  });
+
+  it('says 0 for what is rounding beside the rest of the family, and no bias where the true value is 0', () => {
+    const row = (recorded: number[], truth: number[]): string[] => {
+      const reading = {
+        reading: 'peak',
+        name: 'Peak',
+        unit: 'pA',
+        recorded: Float64Array.from(recorded),
+        truth: Float64Array.from(truth),
+        ladderValue: new Float64Array(recorded.length),
+      } as const;
+      const forecast: Forecast = {
+        clamp: null,
+        dualSite: null,
+        readings: [reading],
+        pipettes: [],
+        notes: [],
+        numerical: { state: 'pending', clampError_mV: null, reach: null },
+      };
+      const summary = { planName: 'P', sweeps: 1, compartments: 1, step_us: 25, wall_s: 1 } as RehearsalSummary;
+      return forecastText({ summary, forecast, protocol: null as never })
+        .split('\n')
+        .slice(4, 4 + recorded.length);
+    };
+    const cells = (line = ''): string[] => line.trim().split(/\s+/).slice(2);
+    const family = row([-500, 7.86e-6, -100.00003, 3e-4], [-400, -9.7e-13, -100, 6e-4]).map(cells);
+    expect(family).toEqual([
+      ['−500', '−400', '−25'],
+      ['0', '0', '–'],
+      ['−100', '−100', '0'],
+      ['0', '6.00e−4', '−50'],
+    ]);
+    // A family that is rounding throughout: less than an electron.
+    expect(row([7.86e-6], [2e-12]).map(cells)).toEqual([['0', '0', '–']]);
   });
 });
 
