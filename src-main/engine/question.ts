@@ -1,14 +1,16 @@
 import { questions, type CheckedQuestion, type RequestName } from '../contract/requests.ts';
 import type { RefusalData } from '../contract/refusal.ts';
+import { refuseDeep } from '../exchange/nesting.ts';
 import { schemaRefusals } from '../exchange/schema-refusals.ts';
 import { Refusal, refuse } from '../units/refuse.ts';
 
 /**
  * A question as its schema reads it. A fault inside a document keeps its own code and the path a plan check would give;
  * a fault of the question itself is `request-malformed`.
- * @throws Refusal with every fault.
+ * @throws Refusal with every fault; `too-large` where it is nested too deep.
  */
 export function checkedQuestion<N extends RequestName>(name: N, question: unknown): CheckedQuestion<N> {
+  refuseDeep(question, '');
   const outcome = questions[name].safeParse(question);
   if (outcome.success) return outcome.data as CheckedQuestion<N>;
   const refusals = schemaRefusals(outcome.error.issues, question, '').map((each) => asAsked(each, name));

@@ -15,6 +15,7 @@ import {
 import type { RefusalData } from '../contract/refusal.ts';
 import { Refusal, refuse } from '../units/refuse.ts';
 import { jsonFault } from './json-fault.ts';
+import { refuseDeep } from './nesting.ts';
 import { placeOf, schemaRefusals } from './schema-refusals.ts';
 
 const wholeSchemas = { cell: cellSchema, rig: rigSchema, protocol: protocolSchema, plan: planSchema } as const;
@@ -68,8 +69,9 @@ export function wholeCell(cell: CellDocument, read: ReadText): CellDocument {
   return { ...cell, shape: { kind: 'swc', text: read(file), fileName: file.split('/').at(-1) ?? file } };
 }
 
-/** A checked document out of a value that came from elsewhere. @throws Refusal listing every fault. */
+/** A checked document out of a value that came from elsewhere. @throws Refusal listing every fault; `too-large` where it is nested too deep. */
 export function checked<S extends z.ZodType>(schema: S, value: unknown, place: string): z.output<S> {
+  refuseDeep(value, place);
   const outcome = schema.safeParse(value);
   if (outcome.success) return outcome.data;
   const [first, ...others] = schemaRefusals(outcome.error.issues, value, place);
