@@ -8,6 +8,10 @@ import { axisLabel, valueAt, type Cursor, type Picture, type Series } from './se
 type Canvas = Chart<'line'>;
 
 const note = '11px "Fira Sans", sans-serif';
+/** A legend's row: the swatch before a name, the gap after it, the chart's menu at the right end. */
+const rowSwatch = 30;
+const rowGap = 14;
+const menuRoom = 36;
 
 function pixel(chart: Canvas, axis: 'x' | 'y', value: number): number {
   return chart.scales[axis]?.getPixelForValue(value) ?? NaN;
@@ -98,25 +102,38 @@ function* crowd(chart: Canvas, picture: Picture): Generator<{ x: number; y: numb
   }
 }
 
+/** In the row of the y label where all names fit beside it, else in the plot's emptiest corner. */
 function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
   const { ctx, chartArea: area } = chart;
   const named = picture.series.filter((one) => one.quiet !== true);
   if (named.length === 0) return;
-  const widest = Math.max(...named.map((one) => ctx.measureText(one.label).width));
-  const width = widest + 46;
+  const widths = named.map((one) => ctx.measureText(one.label).width);
+  const inRow = widths.reduce((sum, width) => sum + width + rowSwatch + rowGap, 0);
+  const labelEnd = Math.max(0, area.left - 40) + ctx.measureText(axisLabel(picture.y)).width;
+  const rowEnd = area.right - menuRoom;
+  if (rowEnd - inRow > labelEnd + rowGap) {
+    let x = rowEnd - inRow + rowGap;
+    named.forEach((one, i) => {
+      paintName(ctx, one, x, area.top - 14, read);
+      x += (widths[i] ?? 0) + rowSwatch + rowGap;
+    });
+    return;
+  }
+  const width = Math.max(...widths) + 46;
   const height = named.length * 16 + 10;
   if (width > area.width * 0.6 || height > area.height * 0.75) return;
   const plot = { left: area.left, top: area.top, width: area.width, height: area.height };
   const box = emptiestCorner(crowd(chart, picture), plot, width, height);
   ctx.fillStyle = faint(read('--panel'), 0.82);
   ctx.fillRect(box.left, box.top, width, height);
-  named.forEach((one, i) => {
-    const y = box.top + 13 + i * 16;
-    swatch(ctx, one, box.left + 8, y, read);
-    ctx.fillStyle = read('--ink');
-    ctx.textAlign = 'left';
-    ctx.fillText(one.label, box.left + 38, y + 4);
-  });
+  named.forEach((one, i) => paintName(ctx, one, box.left + 8, box.top + 13 + i * 16, read));
+}
+
+function paintName(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number, read: ReadToken): void {
+  swatch(ctx, one, x, y, read);
+  ctx.fillStyle = read('--ink');
+  ctx.textAlign = 'left';
+  ctx.fillText(one.label, x + rowSwatch, y + 4);
 }
 
 function swatch(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number, read: ReadToken): void {

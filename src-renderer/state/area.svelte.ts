@@ -6,8 +6,12 @@ export type Area = (typeof areas)[number];
 class AreaState {
   open = $state<Area>('Forecast');
 
+  /** For other state: an area was opened. */
+  whenShown: () => void = () => undefined;
+
   show(area: Area): void {
     this.open = area;
+    this.whenShown();
   }
 }
 

@@ -1,6 +1,9 @@
 // Ties the state together once, at the start: who follows the plan, who hears the engine, what the shell commands.
 import { bridge } from '../bridge.ts';
 import { runShellCommand } from './actions.ts';
+import { area } from './area.svelte.ts';
+import { selectionAtHome } from './at-home.ts';
+import { cursor } from './cursor.svelte.ts';
 import { drawing } from './drawing.svelte.ts';
 import { estimate } from './estimate.svelte.ts';
 import { jobs } from './jobs.svelte.ts';
@@ -8,6 +11,7 @@ import { notebook } from './notebook.svelte.ts';
 import { notices } from './notices.svelte.ts';
 import { plan } from './plan.svelte.ts';
 import { rehearsal } from './rehearsal.svelte.ts';
+import { selection } from './selection.svelte.ts';
 import { isoDay } from '../text/dates.ts';
 
 export function connect(): void {
@@ -15,6 +19,8 @@ export function connect(): void {
     drawing.follow(document);
     estimate.follow(document);
   });
+  area.whenShown = selectAtHome;
+  notebook.whenPlanShown = selectAtHome;
   rehearsal.sessionNow = () => notebook.sessionOf(isoDay(new Date()));
   rehearsal.whenStored = () => void notebook.load(false);
   bridge.onEvent((event) => {
@@ -33,4 +39,9 @@ export function connect(): void {
     if (document.visibilityState === 'hidden') void plan.keep();
   });
   void notebook.load(true);
+}
+
+function selectAtHome(): void {
+  if (!plan.isOpen) return;
+  selection.select(selectionAtHome(area.open, selection.current, plan.document, cursor.sweep));
 }

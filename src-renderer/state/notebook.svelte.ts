@@ -17,6 +17,9 @@ class NotebookState {
   /** Counts what was asked to be opened, so that a late answer is known. */
   #openings = 0;
 
+  /** For other state: a plan was opened, with nothing of it selected yet. */
+  whenPlanShown: () => void = () => undefined;
+
   readonly isReadOnly = $derived(this.overview?.status.readOnly ?? false);
   readonly cells = $derived(this.overview?.cells ?? []);
   readonly openCell = $derived(this.cells.find((c) => c.cellId === plan.cellId) ?? null);
@@ -148,6 +151,7 @@ class NotebookState {
     if (plan.planId !== opened.planId) return;
     const clamp = rehearsal.forecast?.clamp;
     if (clamp) cursor.sweep = clamp.worstSweep;
+    if (selection.current.kind === 'nothing') this.whenPlanShown();
   }
 }
 
