@@ -31,8 +31,9 @@ export function rehearse(desk: Desk, question: CheckedQuestion<'rehearsal start'
 }
 
 /**
- * Rehearses a plan and stores the rehearsal whole; nothing is stored of one that was cancelled or stopped. A finer run
- * for its numerical uncertainty follows when nothing else is to be done.
+ * Rehearses a plan and stores the rehearsal whole; nothing is stored of one that was cancelled or stopped. It is stored
+ * where it was asked for, whatever notebook is opened meanwhile; in the copy, when that notebook is saved under another
+ * name. A finer run for its numerical uncertainty follows when nothing else is to be done.
  * @throws Refusal where the plan cannot run, the notebook cannot be written, or the plan or session is not in it.
  */
 export async function rehearseInto(desk: Desk, notebook: Notebook, job: RehearsalJob): Promise<RehearsalOutcome> {
@@ -47,7 +48,7 @@ export async function rehearseInto(desk: Desk, notebook: Notebook, job: Rehearsa
     running.cancelled = true;
     running.run?.cancel();
   };
-  return desk.inJob(jobId, cancel, async () => {
+  return desk.inJob(jobId, { notebook, cancel }, async (kept) => {
     const check = await desk.pool.run('short', 'check', { plan });
     const [first, ...others] = check.refusals;
     if (first) throw new Refusal([first, ...others]);
@@ -61,8 +62,8 @@ export async function rehearseInto(desk: Desk, notebook: Notebook, job: Rehearsa
     const { compartments, step_us, sweeps } = check;
     const wall_s = (performance.now() - started) / 1000;
     const facts = { planId, sessionId, ...documents, engineVersion, step_us, compartments, sweeps, wall_s };
-    const rehearsalId = store(notebook, facts, outcome);
-    desk.finer.add({ notebook, rehearsalId, sent, sweeps, forecast: outcome.forecast });
+    const rehearsalId = store(kept.notebook, facts, outcome);
+    desk.finer.add({ notebook: kept.notebook, rehearsalId, sent, sweeps, forecast: outcome.forecast });
     return { kind: 'finished', rehearsalId };
   });
 }

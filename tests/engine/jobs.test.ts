@@ -1,8 +1,10 @@
 // Jobs beyond the contract suite: sweeps that carry over, membranes looked at later, workers that die for good, imports.
-import { writeFileSync } from 'node:fs';
+import { existsSync, writeFileSync } from 'node:fs';
 import { afterEach, describe, expect, it } from 'vitest';
 import type { EngineEvent } from '../../src-main/contract/requests.ts';
 import { createEngine, type Engine, type EngineOptions } from '../../src-main/engine/engine.ts';
+import { openNotebook } from '../../src-main/notebook/open.ts';
+import { rehearsalsOfPlan } from '../../src-main/notebook/rehearsals.ts';
 import { rehearsed, refusals, value } from '../support/contract-suite.ts';
 import { testFolder } from '../support/folder.ts';
 import { longPlan, smallPlan } from '../support/small-plans.ts';
@@ -100,6 +102,56 @@ describe('a rehearsal', () => {
     expect(refusals(twice)[0]).toMatchObject({ code: 'request-malformed', place: 'question.jobId' });
     value(await own.ask('job cancel', { jobId: 'job' }));
     expect(value(await running)).toMatchObject({ kind: 'cancelled' });
+  });
+});
+
+describe('a rehearsal that is running while the notebook is changed', () => {
+  /** Started, and its sweeps under way: most of its time is still to come. */
+  async function running(own: Engine) {
+    const plan = longPlan(5);
+    const { planId } = value(await own.ask('plan create', { plan }));
+    const underWay = new Promise<void>((resolve) => {
+      own.onEvent((event) => {
+        if (event.event === 'progress' && event.jobId === 'job' && event.done > 0) resolve();
+      });
+    });
+    const outcome = own.ask('rehearsal start', { jobId: 'job', planId, plan });
+    await underWay;
+    return { planId, outcome };
+  }
+
+  it('is kept in the copy when the notebook is saved under another name', async () => {
+    const own = await inNotebook();
+    const { planId, outcome } = await running(own);
+    value(await own.ask('notebook save as', { path: at('b.holdfast') }));
+    expect(value(await outcome)).toMatchObject({ kind: 'finished' });
+    expect(value(await own.ask('rehearsal list', { planId }))).toHaveLength(1);
+    const first = openNotebook(at('a.holdfast'));
+    expect(first.readOnlyReason).toBeNull(); // closed, and nobody's
+    expect(rehearsalsOfPlan(first, planId)).toEqual([]);
+    first.close();
+  });
+
+  it('is kept where it was asked for when another notebook is opened, which is then closed', async () => {
+    const own = await inNotebook();
+    const { planId, outcome } = await running(own);
+    value(await own.ask('notebook create', { path: at('b.holdfast') }));
+    expect(value(await outcome)).toMatchObject({ kind: 'finished' });
+    expect(value(await own.ask('notebook overview', {})).cells).toEqual([]);
+    const first = openNotebook(at('a.holdfast'));
+    expect(first.readOnlyReason).toBeNull();
+    expect(rehearsalsOfPlan(first, planId)).toHaveLength(1);
+    first.close();
+  });
+
+  it('does not keep its notebook from being written when one goes back to it', async () => {
+    const own = await inNotebook();
+    const { planId, outcome } = await running(own);
+    value(await own.ask('notebook create', { path: at('b.holdfast') }));
+    expect(value(await own.ask('notebook open', { path: at('a.holdfast') })).readOnly).toBe(false);
+    expect(value(await outcome)).toMatchObject({ kind: 'finished' });
+    expect(value(await own.ask('rehearsal list', { planId }))).toHaveLength(1);
+    expect(existsSync(at('b.holdfast-lock'))).toBe(false);
   });
 });
 

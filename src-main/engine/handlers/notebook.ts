@@ -22,13 +22,12 @@ export const notebookHandlers = {
   },
   'notebook open': ({ path }, desk) => {
     // Its lock is ours already: opened a second time it would be for reading only.
-    if (!isOpen(desk, path)) desk.takeNotebook(openNotebook(path));
+    if (!isOpen(desk, path) && !desk.takeBack(realPath(path))) desk.takeNotebook(openNotebook(path));
     return notebookStatus(desk.notebook);
   },
   'notebook save as': ({ path }, desk) => {
     const copy = saveAs(desk.notebook, path);
-    desk.finer.move(desk.notebook, copy);
-    desk.takeNotebook(copy);
+    desk.takeCopy(copy);
     return notebookStatus(desk.notebook);
   },
   'notebook overview': (_, desk) => notebookOverview(desk.notebook),
