@@ -293,8 +293,8 @@ export const protocolSchema = z.strictObject({
   /** False: each sweep starts afresh at the operating point. True: in order, the interval simulated. */
   carryOver: z.boolean().default(false),
   lanes: z.array(laneSchema).min(1).max(pipetteLetters.length),
-  ladders: z.array(ladderSchema).default([]),
-  readings: z.array(readingSchema).default([]),
+  ladders: z.array(ladderSchema).max(64).default([]),
+  readings: z.array(readingSchema).max(64).default([]),
 });
 export type ProtocolDocument = z.infer<typeof protocolSchema>;
 

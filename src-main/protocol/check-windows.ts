@@ -5,33 +5,41 @@ import { rungsOf } from './ladder.ts';
 import { msOf } from './ticks.ts';
 import { windowTicks, type BlocksByLane } from './window.ts';
 
+/** A window with its JSON path. */
+export interface PlacedWindow {
+  readonly window: Window;
+  readonly place: string;
+}
+
 /**
- * A window that hangs on nothing, runs backwards or leaves the sweep; each fault once, at its first sweep.
+ * Windows that hang on nothing, run backwards or leave the sweep; each fault once, at its first sweep.
  * Without `lengths` only the names are looked at: for protocols whose blocks are themselves at fault.
  */
 export function windowFaults(
   protocol: ProtocolDocument,
-  window: Window,
-  place: string,
+  windows: readonly PlacedWindow[],
   faults: Faults,
   lengths = true,
 ): void {
-  if (!windowNames(protocol, window, place, faults) || !lengths) return;
-  for (let rung = 0; rung < rungsOf(protocol); rung += 1) {
+  let sound = windows.filter(({ window, place }) => windowNames(protocol, window, place, faults));
+  if (!lengths) return;
+  for (let rung = 0; rung < rungsOf(protocol) && sound.length > 0; rung += 1) {
     const lanes = rungBlocks(protocol, rung);
     const sweep: BlocksByLane = {
       lanes: protocol.lanes.map((lane, l) => ({ pipette: lane.pipette, blocks: lanes[l] ?? [] })),
     };
-    const at = windowTicks(window, sweep);
     const end = longestLane(lanes);
-    if (at === undefined || (at.from >= 0 && at.from < at.to && at.to <= end)) continue;
-    faults.add('window-outside-sweep', {
-      thing: at.from < at.to ? 'window' : 'window that does not end after its start',
-      place,
-      value: `${msOf(at.from)} to ${msOf(at.to)} ms in sweep ${rung + 1}`,
-      remedy: `keep it within 0 and ${msOf(end)} ms, its end after its start`,
+    sound = sound.filter(({ window, place }) => {
+      const at = windowTicks(window, sweep);
+      if (at === undefined || (at.from >= 0 && at.from < at.to && at.to <= end)) return true;
+      faults.add('window-outside-sweep', {
+        thing: at.from < at.to ? 'window' : 'window that does not end after its start',
+        place,
+        value: `${msOf(at.from)} to ${msOf(at.to)} ms in sweep ${rung + 1}`,
+        remedy: `keep it within 0 and ${msOf(end)} ms, its end after its start`,
+      });
+      return false;
     });
-    return;
   }
 }
 

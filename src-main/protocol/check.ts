@@ -4,26 +4,54 @@ import { blockFaults } from './check-blocks.ts';
 import { ladderFaults } from './check-ladders.ts';
 import { windowFaults } from './check-windows.ts';
 import { Faults } from './faults.ts';
-import { longestLane, rungBlocks } from './lane.ts';
+import { longestLane, rungBlocks, type LaidBlock } from './lane.ts';
 import { rungsOf } from './ladder.ts';
-import { mostSamplesInAll, mostSamplesPerSweep, sampleCount } from './sampling.ts';
+import {
+  mostBlocksInAll,
+  mostPulsesPerSweep,
+  mostSamplesInAll,
+  mostSamplesPerSweep,
+  mostSweeps,
+  sampleCount,
+} from './sampling.ts';
 import { msOf, ticksOfMs, ticksOfUs, type Tick } from './ticks.ts';
 
 /** @throws Refusal with every fault of the protocol. */
 export function refuseFaults(protocol: ProtocolDocument): void {
   const faults = new Faults();
+  countFaults(protocol, faults);
+  // The checks below look at every block in every rung.
+  faults.settle();
   nameFaults(protocol, faults);
   ladderFaults(protocol, faults);
   blockFaults(protocol, faults);
   // Lengths mean nothing while blocks are wrong: one negative duration would be reported at every window.
   const sound = faults.count === 0;
   if (sound) lengthFaults(protocol, faults);
-  protocol.readings.forEach((reading, r) => {
+  const windows = protocol.readings.flatMap(({ window, baseline }, r) => {
     const place = `protocol.readings[${r}]`;
-    windowFaults(protocol, reading.window, `${place}.window`, faults, sound);
-    if (reading.baseline) windowFaults(protocol, reading.baseline, `${place}.baseline`, faults, sound);
+    const over = { window, place: `${place}.window` };
+    return baseline ? [over, { window: baseline, place: `${place}.baseline` }] : [over];
   });
+  windowFaults(protocol, windows, faults, sound);
   faults.settle();
+}
+
+/** More sweeps or blocks than can be laid out. */
+function countFaults(protocol: ProtocolDocument, faults: Faults): void {
+  const rungs = rungsOf(protocol);
+  const sweeps = rungs * protocol.repeats;
+  if (sweeps > mostSweeps) {
+    const value = `${sweeps} sweeps, at most ${mostSweeps}`;
+    const remedy = 'take fewer rungs or repeats';
+    faults.add('too-large', { thing: 'number of sweeps', place: 'protocol', value, remedy });
+  }
+  const blocks = rungs * protocol.lanes.reduce((sum, lane) => sum + lane.blocks.length, 0);
+  if (blocks > mostBlocksInAll) {
+    const value = `${blocks} blocks in all sweeps, at most ${mostBlocksInAll}`;
+    const remedy = 'take fewer rungs or blocks; a pulse train is one block';
+    faults.add('too-large', { thing: 'number of blocks', place: 'protocol', value, remedy });
+  }
 }
 
 function nameFaults(protocol: ProtocolDocument, faults: Faults): void {
@@ -61,7 +89,12 @@ function twice<T>(
 
 function lengthFaults(protocol: ProtocolDocument, faults: Faults): void {
   const interval = ticksOfUs(protocol.sampling_us);
-  const lengths = Array.from({ length: rungsOf(protocol) }, (_, rung) => longestLane(rungBlocks(protocol, rung)));
+  let pulses = 0;
+  const lengths = Array.from({ length: rungsOf(protocol) }, (_, rung) => {
+    const lanes = rungBlocks(protocol, rung);
+    pulses = Math.max(pulses, pulsesIn(lanes));
+    return longestLane(lanes);
+  });
   const longest = lengths.reduce((a, b) => Math.max(a, b), 0);
   emptyFaults(lengths, faults);
   if (longest > 0 && interval > longest) {
@@ -80,7 +113,17 @@ function lengthFaults(protocol: ProtocolDocument, faults: Faults): void {
       remedy: `give at least the longest sweep, ${msOf(longest)} ms`,
     });
   }
+  if (pulses > mostPulsesPerSweep) {
+    const value = `${pulses} pulses in one sweep, at most ${mostPulsesPerSweep}`;
+    faults.add('too-large', { thing: 'sweep', place: 'protocol.lanes', value, remedy: 'give the trains fewer pulses' });
+  }
   sizeFaults(protocol, lengths, interval, faults);
+}
+
+function pulsesIn(lanes: readonly (readonly LaidBlock[])[]): number {
+  let pulses = 0;
+  for (const blocks of lanes) for (const { block } of blocks) if (block.kind === 'pulse train') pulses += block.count;
+  return pulses;
 }
 
 function emptyFaults(lengths: readonly Tick[], faults: Faults): void {
@@ -102,8 +145,7 @@ function sizeFaults(protocol: ProtocolDocument, lengths: readonly Tick[], interv
   if (most > mostSamplesPerSweep) {
     const value = `${most} samples in one sweep, at most ${mostSamplesPerSweep}`;
     faults.add('too-large', { thing: 'sweep', place: 'protocol.sampling_us', value, remedy });
-  }
-  if (all > mostSamplesInAll) {
+  } else if (all > mostSamplesInAll) {
     const value = `${all} samples in all sweeps, at most ${mostSamplesInAll}`;
     faults.add('too-large', { thing: 'protocol', place: 'protocol', value, remedy });
   }

@@ -66,7 +66,7 @@ export function preparePlan(plan: PlanDocument, options: PrepareOptions = {}): P
   ownChannelFaults(plan.cell, faults);
   stepFaults(plan, faults);
   const laidOut = faults.collect(() => layOut(plan.protocol));
-  if (laidOut) planFaults(plan, faults);
+  if (laidOut) planFaults(plan, laidOut.samplesInAll, faults);
   const cut = cutAtSites(plan, options, faults);
   const places = cut && placesOf(plan, cut, faults);
   if (cut) initialFaults(plan, cut, fineness, faults);
@@ -76,8 +76,7 @@ export function preparePlan(plan: PlanDocument, options: PrepareOptions = {}): P
   const kinetics = kineticsByName(plan.cell, cut);
   const grid = withOwnReversals(cut, kinetics);
   const temperature = plan.cell.surroundings.temperature_C;
-  const stepWithoutDivisor = plan.step_us === undefined ? chosenStep(laidOut.samplingTicks) : toSi(plan.step_us, 'us');
-  const step = stepWithoutDivisor / (options.stepDivisor ?? 1);
+  const step = stepOf(plan, laidOut) / (options.stepDivisor ?? 1);
   const initialIndex = initialIndexOf(plan, grid, fineness);
   let found: Start | undefined;
   const start = (): Start => (found ??= startOf({ plan, grid, kinetics, temperature, ...places, step, initialIndex }));
@@ -107,6 +106,11 @@ export function preparePlan(plan: PlanDocument, options: PrepareOptions = {}): P
       };
     },
   };
+}
+
+/** The plan's own step as the whole part of the sampling interval that it is but for its rounding, else the chosen one. */
+function stepOf({ step_us, protocol }: PlanDocument, { sampling, samplingTicks }: LaidOut): Second {
+  return step_us === undefined ? chosenStep(samplingTicks) : sampling / Math.round(protocol.sampling_us / step_us);
 }
 
 /** A placed pipette with its lane's command. */

@@ -1,7 +1,8 @@
 // Documents that ask for too much: refused in a moment, with the limit and what to do, before any memory is taken.
 import { describe, expect, it } from 'vitest';
-import type { Rate } from '../../src-main/contract/documents.ts';
+import type { Block, PlanDocument, Rate } from '../../src-main/contract/documents.ts';
 import { checkedQuestion } from '../../src-main/engine/question.ts';
+import { checkPlan } from '../../src-main/engine/work/check.ts';
 import { readDocument, readPlanFile } from '../../src-main/exchange/documents.ts';
 import { refusalsOf } from '../support/refusals.ts';
 import { smallPlan } from '../support/small-plans.ts';
@@ -36,5 +37,130 @@ describe('a document that is nested too deep', () => {
   it('is read while it is not', () => {
     const document = readDocument(JSON.stringify(withNested(20)), '', 'plan');
     expect(checkedQuestion('plan check', { plan: document }).plan).toEqual(document);
+  });
+});
+
+describe('a protocol that is too large', () => {
+  const { protocol } = plan;
+  const hold = (duration_ms: number): Block => ({ kind: 'hold', id: 'long', duration_ms });
+  const train = (id: string): Block => ({
+    kind: 'pulse train',
+    id,
+    duration_ms: 1000,
+    level: 0,
+    base: -70,
+    width_ms: 0.005,
+    rate_Hz: 100_000,
+    count: 100_000,
+  });
+  const withBlocks = (blocks: Block[], changes: Partial<PlanDocument['protocol']> = {}): PlanDocument => ({
+    ...plan,
+    protocol: {
+      ...protocol,
+      ladders: [],
+      readings: [],
+      sweepInterval_ms: 1e9,
+      ...changes,
+      lanes: [{ pipette: 'A', unit: 'mV', holding: -70, blocks }],
+    },
+  });
+  const rungs = (count: number) => [
+    { lane: 'A', block: 'long', number: 'duration_ms', rungs: { start: 10, increment: 0, count } } as const,
+  ];
+  const many = (count: number, block: (id: string) => Block) =>
+    Array.from({ length: count }, (_, i) => block(`b-${i}`));
+
+  it.each<[string, PlanDocument, string, string]>([
+    [
+      'a sweep of 10⁹ samples',
+      withBlocks([hold(50e6)]),
+      'protocol.sampling_us',
+      '1000000001 samples in one sweep, at most 50000000',
+    ],
+    [
+      'sweeps of 10⁹ samples together',
+      withBlocks([hold(50e3)], { repeats: 1000 }),
+      'protocol',
+      '1000001000 samples in all sweeps, at most 100000000',
+    ],
+    [
+      'more traces than can be kept',
+      {
+        ...withBlocks([hold(50e3)], { repeats: 90 }),
+        probes: ['x', 'y'].map((name) => ({ name, site: { compartment: 'far' } })),
+      },
+      'plan',
+      '90000090 samples in all sweeps, in 5 traces: more than 400000000 numbers',
+    ],
+    [
+      '10⁶ sweeps',
+      withBlocks([hold(10)], { repeats: 1000, ladders: rungs(1000) }),
+      'protocol',
+      '1000000 sweeps, at most 10000',
+    ],
+    [
+      'a ladder of many rungs over many blocks',
+      withBlocks([hold(10), ...many(999, (id) => ({ kind: 'step', id, duration_ms: 1, level: 0 }))], {
+        ladders: rungs(10_000),
+      }),
+      'protocol',
+      '10000000 blocks in all sweeps, at most 2000000',
+    ],
+    [
+      'trains of 10⁸ pulses',
+      withBlocks(many(1000, train), { sampling_us: 100 }),
+      'protocol.lanes',
+      '100000000 pulses in one sweep, at most 1000000',
+    ],
+  ])('is refused with its size and the limit: %s', (_, asked, place, value) => {
+    const [refusal, ...others] = checkPlan({ plan: asked }).refusals;
+    expect(others).toEqual([]);
+    expect(refusal).toMatchObject({ code: 'too-large', place, value });
+  });
+
+  it.each<[string, object, string]>([
+    ['counted', { start: 0, increment: 1, count: 1_000_000 }, 'protocol.ladders[0].rungs.count'],
+    ['listed', { list: Array<number>(1_000_000).fill(0) }, 'protocol.ladders[0].rungs.list'],
+  ])('is refused where a ladder has 10⁶ rungs, %s', (_, given, place) => {
+    const asked = { ...plan, protocol: { ...protocol, ladders: [{ ...protocol.ladders[0], rungs: given }] } };
+    const [refusal, ...others] = refusalsOf(() => checkedQuestion('plan check', { plan: asked }));
+    expect(others).toEqual([]);
+    expect(refusal).toMatchObject({ place, remedy: expect.stringContaining('at most 10000') });
+  });
+
+  it('is refused where there are 10⁵ ladders or readings', () => {
+    const asked = {
+      ...plan,
+      protocol: {
+        ...protocol,
+        ladders: Array<unknown>(100_000).fill(protocol.ladders[0]),
+        readings: Array<unknown>(100_000).fill(protocol.readings[0]),
+      },
+    };
+    const refused = refusalsOf(() => checkedQuestion('plan check', { plan: asked }));
+    expect(refused.map(({ code, place, remedy }) => `${code} ${place}: ${remedy}`)).toEqual([
+      'too-large protocol.ladders: give at most 64 of them',
+      'too-large protocol.readings: give at most 64 of them',
+    ]);
+  });
+
+  it('is laid out while it is within the limits', () => {
+    // A tenth of the most blocks, and as many readings as there may be: every window is looked at in every rung.
+    const blocks = [hold(10), ...many(199, (id) => ({ kind: 'step', id, duration_ms: 0.01, level: 0 }))];
+    const reading = (i: number) => ({
+      id: `r-${i}`,
+      name: 'r',
+      pipette: 'A' as const,
+      measure: 'mean' as const,
+      direction: 'largest' as const,
+      window: {
+        lane: 'A' as const,
+        from: { block: 'long', edge: 'start' as const, offset_ms: 0 },
+        to: { block: 'b-198', edge: 'end' as const, offset_ms: 0 },
+      },
+    });
+    const readings = Array.from({ length: 64 }, (_, i) => reading(i));
+    const found = checkPlan({ plan: withBlocks(blocks, { ladders: rungs(1000), readings }) });
+    expect(found).toMatchObject({ refusals: [], sweeps: 1000 });
   });
 });
