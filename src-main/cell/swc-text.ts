@@ -1,5 +1,5 @@
 // Bytes of an SWC file to text, and text to lines.
-import { SwcFault, type Findings } from './swc-findings.ts';
+import { Findings, SwcFault } from './swc-findings.ts';
 
 /** Refused before it is read. Design choice: the largest published reconstructions stay far below. */
 export const mostBytes = 100_000_000;
@@ -18,6 +18,11 @@ export function decodeSwc(bytes: Uint8Array, findings: Findings): string {
   if (zero >= 0) throw new SwcFault('E_BINARY', lineAt(text, zero));
   if (text.includes('\r')) findings.note('W_LINE_ENDS');
   return text;
+}
+
+/** The text as a document keeps it, decoded as for reading; what is wrong with it shows when it is read. */
+export function textOfSwc(bytes: Uint8Array): string {
+  return decoded(bytes, new Findings());
 }
 
 function decoded(bytes: Uint8Array, findings: Findings): string {

@@ -10,7 +10,7 @@ const usage = 'usage: holdfast check FILE.swc [--json]';
  *
  * @returns the exit code: 0 accepted or repaired, 2 refused or unreadable.
  */
-export async function check(args: string[]): Promise<number> {
+export function check(args: string[]): number {
   const files = args.filter((arg) => !arg.startsWith('--'));
   const options = args.filter((arg) => arg.startsWith('--'));
   const [file, ...more] = files;
@@ -19,7 +19,7 @@ export async function check(args: string[]): Promise<number> {
     return 2;
   }
   try {
-    const reading = await readSwcFile(file);
+    const reading = readSwcFile(file);
     const { report } = reading;
     const isRefused = reading.kind === 'refused';
     if (options.includes('--json')) {

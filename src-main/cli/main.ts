@@ -3,7 +3,7 @@ import { programVersion } from '../engine/version.ts';
 
 interface Command {
   readonly words: string;
-  readonly load: () => Promise<(args: string[]) => Promise<number>>;
+  readonly load: () => Promise<(args: string[]) => number | Promise<number>>;
 }
 
 const commands: Readonly<Record<string, Command>> = {

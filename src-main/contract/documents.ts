@@ -104,7 +104,7 @@ export type Generator = z.infer<typeof generatorSchema>;
 export const shapeSourceSchema = z.union([
   /** Relative to the document; exports replace it by the text. */
   z.strictObject({ kind: z.literal('swc'), file: z.string().min(1) }),
-  z.strictObject({ kind: z.literal('swc'), text: z.string().min(1), fileName: z.string().optional() }),
+  z.strictObject({ kind: z.literal('swc'), text: z.string().min(1).max(100_000_000), fileName: z.string().optional() }),
   z.strictObject({ kind: z.literal('generator'), generator: generatorSchema }),
 ]);
 export type ShapeSource = z.infer<typeof shapeSourceSchema>;

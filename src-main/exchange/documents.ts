@@ -47,15 +47,16 @@ export type ReadText = (path: string) => string;
 
 /**
  * A plan with everything in it: `{file}` parts read through `read`, shape files put in as text. A file named inside a
- * part is relative to that part. `place` is the plan file's own name.
+ * part is relative to that part. Shape files come through `readShape`: they may be in another encoding. `place` is the
+ * plan file's own name.
  * @throws Refusal as `readDocument`, and whatever `read` throws.
  */
-export function wholePlan(plan: PlanFile, read: ReadText): PlanDocument {
+export function wholePlan(plan: PlanFile, read: ReadText, readShape: ReadText = read): PlanDocument {
   const cell = 'file' in plan.cell ? readDocument(read(plan.cell.file), plan.cell.file, 'cell') : plan.cell;
   const cellFile = 'file' in plan.cell ? plan.cell.file : '';
   return {
     ...plan,
-    cell: wholeCell(cell, (path) => read(besideFile(cellFile, path))),
+    cell: wholeCell(cell, (path) => readShape(besideFile(cellFile, path))),
     rig: 'file' in plan.rig ? readDocument(read(plan.rig.file), plan.rig.file, 'rig') : plan.rig,
     protocol:
       'file' in plan.protocol ? readDocument(read(plan.protocol.file), plan.protocol.file, 'protocol') : plan.protocol,

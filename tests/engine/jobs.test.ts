@@ -1,5 +1,6 @@
 // Jobs beyond the contract suite: sweeps that carry over, membranes looked at later, workers that die for good, imports.
-import { existsSync, writeFileSync } from 'node:fs';
+import { existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
 import { afterEach, describe, expect, it } from 'vitest';
 import type { EngineEvent } from '../../src-main/contract/requests.ts';
 import { createEngine, type Engine, type EngineOptions } from '../../src-main/engine/engine.ts';
@@ -169,6 +170,15 @@ describe('cells and plans from outside', () => {
     expect(drawing.inputResistance_MOhm).toBeGreaterThan(0);
     const none = value(await own.ask('cell import', { name: 'x.swc', bytes: new TextEncoder().encode('no shape\n') }));
     expect(none).toMatchObject({ cell: null, report: { outcome: 'refuse' } });
+  });
+
+  it.each(['12_utf16.swc', '13_latin1_comment.swc'])('can cut the cell that it imports from %s', async (name) => {
+    const own = await inNotebook();
+    const bytes = new Uint8Array(readFileSync(fileURLToPath(new URL(`../support/swc-cases/${name}`, import.meta.url))));
+    const { cell } = value(await own.ask('cell import', { name, bytes }));
+    if (!cell) throw new Error('no cell');
+    expect(value(await own.ask('cell drawing', { cell, sites: [] })).compartments.count).toBeGreaterThan(1);
+    expect(JSON.stringify(cell)).not.toContain('\ufffd');
   });
 
   it('imports the plan that it exports, and no plan that names files', async () => {

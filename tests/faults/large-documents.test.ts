@@ -1,12 +1,17 @@
 // Documents that ask for too much: refused in a moment, with the limit and what to do, before any memory is taken.
+import { truncateSync, writeFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import type { Block, PlanDocument, Rate } from '../../src-main/contract/documents.ts';
 import { checkedQuestion } from '../../src-main/engine/question.ts';
+import { readPlanWhole } from '../../src-main/engine/read-plan.ts';
+import { readSwcFile } from '../../src-main/engine/swc-file.ts';
 import { checkPlan } from '../../src-main/engine/work/check.ts';
 import { readDocument, readPlanFile } from '../../src-main/exchange/documents.ts';
+import { testFolder } from '../support/folder.ts';
 import { refusalsOf } from '../support/refusals.ts';
 import { smallPlan } from '../support/small-plans.ts';
 
+const at = testFolder();
 const plan = smallPlan();
 
 /** The plan with one gate whose opening rate is nested so deep. */
@@ -162,5 +167,57 @@ describe('a protocol that is too large', () => {
     const readings = Array.from({ length: 64 }, (_, i) => reading(i));
     const found = checkPlan({ plan: withBlocks(blocks, { ladders: rungs(1000), readings }) });
     expect(found).toMatchObject({ refusals: [], sweeps: 1000 });
+  });
+});
+
+describe('a file that is too large, or no file', () => {
+  const shaped = {
+    kind: 'cell',
+    format: 1,
+    name: 'Shaped',
+    surroundings: { temperature_C: 22 },
+    shape: { kind: 'swc', file: 'big.swc' },
+    regions: [{ name: 'all', swcTypes: [1] }],
+    makeUp: [
+      {
+        region: 'all',
+        capacitance_uF_cm2: 1,
+        axialResistivity_Ohm_cm: 100,
+        leak: { conductance_mS_cm2: 0.1, reversal_mV: -70 },
+      },
+    ],
+  };
+  /** A file with a hole of so many bytes, which takes no place on the disk. */
+  function fileOf(name: string, bytes: number): string {
+    writeFileSync(at(name), '');
+    truncateSync(at(name), bytes);
+    return at(name);
+  }
+
+  it('is refused by its size: an SWC file of 200 MB, by itself and beside a plan', () => {
+    const big = { code: 'too-large', place: fileOf('big.swc', 200e6), value: '200 MB' };
+    expect(refusalsOf(() => readSwcFile(at('big.swc')))).toEqual([expect.objectContaining(big)]);
+    writeFileSync(at('a.plan.json'), JSON.stringify({ ...plan, cell: shaped }));
+    expect(refusalsOf(() => readPlanWhole(at('a.plan.json')))).toEqual([
+      expect.objectContaining({ ...big, remedy: 'give a file of at most 100 MB' }),
+    ]);
+  });
+
+  it('is refused where the plan holds an SWC text of 200 MB', () => {
+    const cell = { ...shaped, shape: { kind: 'swc', text: ' '.repeat(200e6) } };
+    const [refusal, ...others] = refusalsOf(() => checkedQuestion('plan check', { plan: { ...plan, cell } }));
+    expect(others).toEqual([]);
+    expect(refusal).toMatchObject({ code: 'too-large', place: 'cell.shape.text' });
+  });
+
+  it('is refused by its size: a plan of 4 GB', () => {
+    expect(refusalsOf(() => readPlanWhole(fileOf('a.plan.json', 4e9)))).toEqual([
+      expect.objectContaining({ code: 'too-large', value: '4000 MB', remedy: 'give a file of at most 200 MB' }),
+    ]);
+  });
+
+  it.runIf(process.platform === 'linux')('is refused where it is a device that never ends', () => {
+    for (const read of [readSwcFile, readPlanWhole])
+      expect(refusalsOf(() => read('/dev/zero'))[0]).toMatchObject({ code: 'file-unreadable', value: 'no file' });
   });
 });

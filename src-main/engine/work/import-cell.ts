@@ -1,6 +1,7 @@
 import type { MakeUpDocument, RegionDocument, ShapedCellDocument } from '../../contract/documents.ts';
 import { documentFormat } from '../../contract/documents.ts';
 import { readSwc } from '../../cell/swc-read.ts';
+import { textOfSwc } from '../../cell/swc-text.ts';
 import type { WorkAnswer, WorkQuestion } from '../work.ts';
 
 /** @source INCF SWC specification 1.0.3, structure identifiers. */
@@ -28,7 +29,7 @@ export function importCell({ name, bytes }: WorkQuestion<'import cell'>): WorkAn
     note: 'The membrane values are assumed to start with: the shape file holds none. Set them from your own recordings.',
     surroundings: { temperature_C: 22 },
     channels: [],
-    shape: { kind: 'swc', text: new TextDecoder().decode(bytes), fileName: name },
+    shape: { kind: 'swc', text: textOfSwc(bytes), fileName: name },
     regions,
     makeUp: regions.map(assumedMakeUp),
   };
