@@ -90,6 +90,9 @@ function afterInterval(
     ...input,
     ...(hooks.cancelled && { cancelled: hooks.cancelled }),
     duration: rest,
+    // Nothing is looked at on the way: samples at the ends alone, however long the interval is.
+    sampling: rest,
+    step: rest / Math.max(1, Math.ceil(rest / prepared.step - 1e-6)),
     probes: [],
     pipettes: input.pipettes.map((pipette) => {
       const holding = sweep.lanes.find((lane) => lane.pipette === pipette.letter)?.holding ?? NaN;

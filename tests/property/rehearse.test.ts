@@ -49,6 +49,32 @@ function done(prepared: PreparedPlan, sweep: number, start?: SweepState): Rehear
   return rehearsed;
 }
 
+describe('the interval between sweeps that carry over', () => {
+  it('leaves the cell as a sweep does that is held as long', () => {
+    const carried = done(preparePlan(spiking({ carryOver: true, sweepInterval_ms: 20 })), 0).end;
+    const held = planOf({
+      cell: squid,
+      pipettes: [{ letter: 'A', site: { compartment: 'patch' }, mode: 'current clamp' }],
+      lanes: [{ holding: 0, blocks: [hold('before', 2), step('test', 1, 2000), hold('after', 17)] }],
+      protocol: { sweepInterval_ms: 20 },
+    });
+    const { V, gates } = done(preparePlan(held), 0).end;
+    // The same steps, but for the damped ones where the interval begins: measured 3e-10 V and 2e-8.
+    expect(Math.abs(carried.V[0]! - V[0]!)).toBeLessThan(3e-9);
+    carried.gates?.flat().forEach((state, g) => {
+      expect(Math.abs(state[0]! - (gates?.flat()[g]?.[0] ?? NaN))).toBeLessThan(2e-7);
+    });
+    expect(carried.gates?.flat()).toHaveLength(3);
+  });
+
+  it('takes no memory for its length, and can be cancelled in it', () => {
+    // Twelve days at 20 kHz: 2·10¹⁰ samples.
+    const prepared = preparePlan(spiking({ carryOver: true, sweepInterval_ms: 1e9 }));
+    let polls = 0;
+    expect(rehearseSweep(prepared, 0, { cancelled: () => (polls += 1) > 3 })).toEqual({ kind: 'cancelled', sweep: 0 });
+  });
+});
+
 describe('a rehearsed sweep', () => {
   it('has a recording, command and membrane for each pipette and a membrane for each probe, in trade units', () => {
     const { traces } = done(preparePlan(planOf(passive)), 0);
