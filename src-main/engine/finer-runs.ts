@@ -65,6 +65,7 @@ export class FinerRuns {
     const sent = { ...run.sent, finer: true };
     const jobId = `finer-${run.rehearsalId}`;
     const running = startRun(this.#pool, sent, run.sweeps, {
+      keepsTraces: false,
       onProgress: (done, left_s) =>
         this.#emit({ event: 'progress', jobId, what: 'numerical uncertainty', done, left_s }),
       onSweep: () => undefined,

@@ -1,9 +1,9 @@
 import type { ClampForecast, Forecast } from '../contract/results.ts';
 
 /**
- * Numerical uncertainty: |figure − the same figure with compartment length, step and spacing of the gate tables halved|. Clamp error: the larger move of
- * the access error and, sweep by sweep, of the largest steady error anywhere on the cell, mV. Reach: a share, 0 to 1.
- * Both null where there is no clamp to compare.
+ * Numerical uncertainty: |figure − the same figure with compartment length, step and spacing of the gate tables halved|.
+ * Clamp error: the larger move of the access error and, sweep by sweep, of the largest steady error anywhere on the cell,
+ * mV. Reach: a share, 0 to 1. Both null where there is no clamp to compare.
  * @source grid refinement as an estimate of discretisation error: Richardson LF (1911), Phil Trans R Soc A 210:307
  *         (from memory), without the extrapolation.
  */

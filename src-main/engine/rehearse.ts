@@ -54,6 +54,7 @@ export async function rehearseInto(desk: Desk, notebook: Notebook, job: Rehearsa
     if (first) throw new Refusal([first, ...others]);
     if (running.cancelled) return { kind: 'cancelled', sweepsDone: 0 };
     running.run = startRun(desk.pool, sent, check.sweeps, {
+      keepsTraces: true,
       onProgress: (done, left_s) => desk.emit({ event: 'progress', jobId, what: 'sweeps', done, left_s }),
       onSweep: (sweep) => desk.emit({ event: 'sweep', jobId, arrived: arrival(sweep, check.sweeps) }),
     });

@@ -7,6 +7,8 @@ import { Progress } from './progress.ts';
 import type { SentPlan, SentSweep, WorkAnswer } from './work.ts';
 
 export interface RunWishes {
+  /** False: only the forecast is wanted, and traces are let go as they arrive. */
+  readonly keepsTraces: boolean;
   readonly onProgress: (done: number, left_s: number | null) => void;
   readonly onSweep: (sweep: SentSweep) => void;
 }
@@ -44,7 +46,7 @@ export function startRun(pool: Pool, sent: SentPlan, count: number, wishes: RunW
           onProgress: (done) => progress.report(piece, done * sweeps.length),
           onPart: (sweep) => {
             if (Atomics.load(flag, 0) !== 0) return;
-            arrived.set(sweep.sweep, sweep);
+            arrived.set(sweep.sweep, wishes.keepsTraces ? sweep : { ...sweep, traces: [] });
             wishes.onSweep(sweep);
           },
         },

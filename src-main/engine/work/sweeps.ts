@@ -12,6 +12,8 @@ export function sweeps(
   { sent, sweeps: wanted }: WorkQuestion<'sweeps'>,
   hooks: WorkHooks<'sweeps'>,
 ): WorkAnswer<'sweeps'> {
+  // One that waited its turn while its job was cancelled: to make the plan ready may take seconds.
+  if (hooks.cancelled()) return { kind: 'cancelled' };
   try {
     return inOrder({ sent, sweeps: wanted }, hooks);
   } catch (error) {
