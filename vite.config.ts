@@ -14,5 +14,7 @@ export default defineConfig({
     // No font or picture becomes a data: address, which the content security policy refuses.
     assetsInlineLimit: 0,
     modulePreload: false,
+    // How long each plugin took is of no use to somebody who starts the program.
+    rolldownOptions: { checks: { pluginTimings: false } },
   },
 });
