@@ -16,6 +16,11 @@ import type { RefusalData } from './refusal.ts';
 
 const id = z.int().positive();
 const text = z.string().max(1_000_000);
+/**
+ * Path of the notebook that the numbers in a question belong to. Refused when another is open by now: its plan 3 is not
+ * the one that was meant. Whoever saves by itself, behind the user's back, gives it.
+ */
+const meantFor = z.string().min(1).optional();
 
 /** Question schemas by request name. */
 export const questions = {
@@ -37,14 +42,14 @@ export const questions = {
 
   'plan create': z.strictObject({ plan: planSchema, cellId: id.optional() }),
   'plan open': z.strictObject({ planId: id }),
-  'plan keep draft': z.strictObject({ planId: id, plan: planSchema }),
+  'plan keep draft': z.strictObject({ planId: id, plan: planSchema, notebook: meantFor }),
   'plan name': z.strictObject({ planId: id, name: z.string().trim().min(1).max(200) }),
   /** Removing hides; undo brings back. */
   'plan remove': z.strictObject({ planId: id, removed: z.boolean() }),
   'plan check': z.strictObject({ plan: planSchema }),
 
   'session create': z.strictObject({ cellId: id, date: z.iso.date(), title: z.string().max(200).default('') }),
-  'session write': z.strictObject({ sessionId: id, title: z.string().max(200), notes: text }),
+  'session write': z.strictObject({ sessionId: id, title: z.string().max(200), notes: text, notebook: meantFor }),
   'session read': z.strictObject({ sessionId: id }),
 
   /** A job: answers when it ends; progress and sweeps arrive as events under `jobId`, which the asker chooses. */

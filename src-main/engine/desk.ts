@@ -41,6 +41,13 @@ export class Desk {
     });
   }
 
+  /** The open notebook, if it is the one that was meant. @throws Refusal `notebook-record-missing` when it is another. */
+  notebookAt(path: string | undefined): Notebook {
+    if (path === undefined || path === this.notebook.path) return this.notebook;
+    const remedy = 'open that notebook again; nothing was written to this one';
+    return refuse('notebook-record-missing', { thing: 'notebook', place: path, value: 'not open any more', remedy });
+  }
+
   get notebookPath(): string | null {
     return this.#notebook?.path ?? null;
   }

@@ -156,6 +156,30 @@ describe('a rehearsal that is running while the notebook is changed', () => {
   });
 });
 
+describe('what saves itself', () => {
+  it('is not written into another notebook that was opened meanwhile', async () => {
+    const own = await inNotebook();
+    const { planId, cellId } = value(await own.ask('plan create', { plan: smallPlan() }));
+    const { sessionId } = value(await own.ask('session create', { cellId, date: '2026-03-14' }));
+    value(await own.ask('notebook create', { path: at('b.holdfast') }));
+    const other = value(await own.ask('plan create', { plan: smallPlan({ name: 'Another' }) }));
+    value(await own.ask('session create', { cellId: other.cellId, date: '2026-03-15' }));
+    expect(other.planId).toBe(planId); // the numbers begin anew in each notebook
+
+    const notebook = at('a.holdfast');
+    const late = await own.ask('plan keep draft', { planId, plan: smallPlan({ name: 'Late' }), notebook });
+    expect(refusals(late)[0]).toMatchObject({ code: 'notebook-record-missing', place: notebook });
+    const notes = await own.ask('session write', { sessionId, title: 'Late', notes: '', notebook });
+    expect(refusals(notes)[0]).toMatchObject({ code: 'notebook-record-missing', place: notebook });
+    expect(value(await own.ask('plan open', { planId })).plan.name).toBe('Another');
+    expect(value(await own.ask('session read', { sessionId })).title).toBe('');
+
+    value(await own.ask('notebook open', { path: notebook }));
+    value(await own.ask('plan keep draft', { planId, plan: smallPlan({ name: 'Late' }), notebook }));
+    expect(value(await own.ask('plan open', { planId })).plan.name).toBe('Late');
+  });
+});
+
 describe('cells and plans from outside', () => {
   it('makes a cell around a shape file, its membrane assumed and said so', async () => {
     const own = await inNotebook();

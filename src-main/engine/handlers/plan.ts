@@ -17,8 +17,8 @@ export const planHandlers = {
     rememberOpenPlan(desk.notebook, planId);
     return plan;
   },
-  'plan keep draft': ({ planId, plan }, desk) => ({
-    savedAt: keepDraft(desk.notebook, planId, written(plan), written(plan.cell)),
+  'plan keep draft': ({ planId, plan, notebook }, desk) => ({
+    savedAt: keepDraft(desk.notebookAt(notebook), planId, written(plan), written(plan.cell)),
   }),
   'plan name': ({ planId, name }, desk) => {
     const plan = { ...readPlan(desk.notebook, planId).plan, name };

@@ -5,8 +5,8 @@ export const sessionHandlers = {
   'session create': ({ cellId, date, title }, desk) => ({
     sessionId: createSession(desk.notebook, cellId, date, title),
   }),
-  'session write': ({ sessionId, title, notes }, desk) => ({
-    savedAt: writeSession(desk.notebook, sessionId, title, notes),
+  'session write': ({ sessionId, title, notes, notebook }, desk) => ({
+    savedAt: writeSession(desk.notebookAt(notebook), sessionId, title, notes),
   }),
   'session read': ({ sessionId }, desk) => readSession(desk.notebook, sessionId),
 } satisfies Partial<Handlers>;
