@@ -1,7 +1,7 @@
 // A shaped cell to its grid: finite volumes around nodes, from midpoint to midpoint.
 import type { ShapedCellDocument, Site } from '../contract/documents.ts';
 import type { RefusalData } from '../contract/refusal.ts';
-import type { Metre } from '../units/si.ts';
+import type { Metre, SquareMetre } from '../units/si.ts';
 import { cableOf, eachSlice, type Cable } from './cable.ts';
 import { ConductanceSums } from './conductance-sums.ts';
 import { refuseFaults } from './faults.ts';
@@ -95,18 +95,20 @@ function sumUp(cell: ShapedCell, byBranch: readonly BranchNodes[]): Sums {
   const coupling = new Float64Array(count);
   const capacitance = new Float64Array(count);
   const regionArea = regions.map(() => new Float64Array(count));
+  const regionStretch = regions.map(() => ({ own: new Float64Array(count), parents: new Float64Array(count) }));
   const conductances = new ConductanceSums(count);
   const branchOf = new Int32Array(count);
   const at = new Float64Array(count);
   const distance = new Float64Array(count);
   const position = new Float64Array(3 * count);
-  const cover = (k: number, region: number, smoothArea: number) => {
+  const cover = (k: number, region: number, smoothArea: number): SquareMetre => {
     const makeUp = makeUps[region]!;
     const area = smoothArea * makeUp.spineFactor;
     regionArea[region]![k]! += area;
     capacitance[k]! += area * makeUp.capacitance;
     for (const { channel, density, reversal } of makeUp.channels)
       conductances.add(k, channel, area * density, reversal);
+    return area;
   };
   position.set(shape.soma?.kind === 'sphere' ? shape.soma.centre : shape.branches[0]!.xyz.subarray(0, 3));
   if (cable.sphereRegion >= 0) cover(0, cable.sphereRegion, 4 * Math.PI * shape.soma!.radius ** 2);
@@ -124,7 +126,9 @@ function sumUp(cell: ShapedCell, byBranch: readonly BranchNodes[]): Sums {
     const halves = places.flatMap((place, n) => (n === 0 ? [place] : [(places[n - 1]! + place) / 2, place]));
     const resistance = new Float64Array(places.length);
     eachSlice(cable.pieces[b]!, halves, (s, region, r0, r1, length) => {
-      cover(nodes[(s + 1) >> 1]!, region, sideArea(r0, r1, length));
+      const area = cover(nodes[(s + 1) >> 1]!, region, sideArea(r0, r1, length));
+      const stretch = regionStretch[region]!;
+      (s % 2 === 0 ? stretch.parents : stretch.own)[nodes[(s >> 1) + 1]!]! += area;
       resistance[(s >> 1) + 1]! += axialResistance(makeUps[region]!.axial, r0, r1, length);
     });
     for (let n = 1; n < places.length; n += 1) coupling[nodes[n]!] = 1 / resistance[n]!;
@@ -144,6 +148,7 @@ function sumUp(cell: ShapedCell, byBranch: readonly BranchNodes[]): Sums {
     regionNames: regions.map((region) => region.name),
     regionIndex: Int32Array.from(area, (_, k) => largest(regionArea, k)),
     regionArea,
+    regionStretch,
   };
 }
 

@@ -50,6 +50,7 @@ export function cutSketch(document: SketchedCellDocument, sites: readonly Site[]
     regionNames: [wholeCell],
     regionIndex: new Int32Array(count),
     regionArea: [area],
+    regionStretch: null,
     names,
     compartmentAt,
   };

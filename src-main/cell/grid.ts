@@ -25,10 +25,23 @@ export interface Grid {
   readonly regionIndex: Int32Array;
   /** Membrane area by region: regionArea[r][k], m². A compartment at a fork or region border counts in several. */
   readonly regionArea: readonly Float64Array[];
+  /** By region, the membrane that lies on the way between two centres; null for a sketch, which has no ways. */
+  readonly regionStretch: readonly StretchArea[] | null;
   /** Sketched cells only. */
   readonly names: readonly string[] | null;
   /** The compartment whose centre is the site. The sites given when the grid was cut are centres exactly. */
   compartmentAt(site: Site, place: string): number;
+}
+
+/**
+ * Entry k: membrane between compartment k's centre and its parent's, m². It is part of the area of the compartments it
+ * belongs to; what a compartment has beyond its stretches lies at its centre, such as the sphere of a soma.
+ */
+export interface StretchArea {
+  /** The half that belongs to k. */
+  readonly own: Float64Array;
+  /** The half that belongs to the parent. */
+  readonly parents: Float64Array;
 }
 
 export interface GridConductance {

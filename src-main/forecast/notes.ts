@@ -15,7 +15,7 @@ export function forecastNotes(prepared: PreparedPlan, done: readonly RehearsedSw
     ...aboutSteps(prepared),
     ...aboutReadings(prepared),
     'Levels are those on the dial: no junction potential is taken off.',
-    'Every compartment counts by its membrane area, axon and spines included.',
+    'Reach counts membrane by its area, axon and spines included.',
   ];
 }
 

@@ -1,27 +1,41 @@
-import type { Grid } from '../cell/grid.ts';
+import type { Grid, StretchArea } from '../cell/grid.ts';
 import type { Metre, SquareMetre, Volt } from '../units/si.ts';
 
+type Membrane = Pick<Grid, 'count' | 'parent' | 'area' | 'regionNames' | 'regionArea' | 'regionStretch'>;
+
 /**
- * Reach: the share of membrane area whose |clamp error| is within the tolerance, Σ area_k [|e_k| ≤ tol] / Σ area_k.
- * Spines and axon count.
+ * Reach: the share of membrane area whose |clamp error| is within the tolerance. Spines and axon count.
+ *
+ * Between two centres the error is taken as a straight line and the membrane as spread evenly over each half of the way,
+ * so that a compartment at the edge counts by the part of it that is inside; what lies at a centre, and the compartments
+ * of a sketch, count whole or not at all. Second order in the length of compartments.
  *
  * @param error V per compartment, grid order.
  * @returns 0 to 1.
  */
-export function reachOf(grid: Pick<Grid, 'count' | 'area'>, error: Float64Array, tolerance: Volt): number {
-  return shareOf(grid.area, error, tolerance);
+export function reachOf(grid: Membrane, error: Float64Array, tolerance: Volt): number {
+  const edges = (grid.regionStretch ?? []).map((stretch) => atEdges(grid.parent, stretch, error, tolerance));
+  return shareOf(
+    grid.area,
+    error,
+    tolerance,
+    edges.reduce((total, area) => total + area, 0),
+  );
 }
 
 /** The same by region; a compartment on a border counts in each by the area it has there. Regions without area are left out. */
 export function reachByRegion(
-  grid: Pick<Grid, 'regionNames' | 'regionArea'>,
+  grid: Membrane,
   error: Float64Array,
   tolerance: Volt,
 ): { readonly region: string; readonly area: SquareMetre; readonly reach: number }[] {
   return grid.regionNames.flatMap((region, r) => {
     const area = grid.regionArea[r] ?? new Float64Array();
     const total = sum(area);
-    return total === 0 ? [] : [{ region, area: total, reach: shareOf(area, error, tolerance) }];
+    if (total === 0) return [];
+    const stretch = grid.regionStretch?.[r];
+    const edges = stretch === undefined ? 0 : atEdges(grid.parent, stretch, error, tolerance);
+    return [{ region, area: total, reach: shareOf(area, error, tolerance, edges) }];
   });
 }
 
@@ -58,8 +72,41 @@ export function trustDistance(
   return nearest === Infinity ? null : nearest;
 }
 
-function shareOf(area: Float64Array, error: Float64Array, tolerance: Volt): number {
-  return sum(area.map((a, k) => (Math.abs(error[k] ?? NaN) <= tolerance ? a : 0))) / sum(area);
+/** The share of whole compartments within the tolerance, `edges` more or less: what compartments at the edge have inside. */
+function shareOf(area: Float64Array, error: Float64Array, tolerance: Volt, edges: SquareMetre): number {
+  const inside = sum(area.map((a, k) => (isWithin(error[k], tolerance) ? a : 0)));
+  return Math.min(1, Math.max(0, (inside + edges) / sum(area)));
+}
+
+/**
+ * What to add to the area of the compartments whose centres are within the tolerance, m²: for every stretch on which the
+ * error crosses it, what is inside of the compartment that is out, less what is outside of the one that is in.
+ */
+function atEdges(parent: Int32Array, stretch: StretchArea, error: Float64Array, tolerance: Volt): SquareMetre {
+  let area = 0;
+  for (let k = 1; k < parent.length; k += 1) {
+    const p = parent[k] ?? -1;
+    const own = error[k] ?? NaN;
+    const parents = error[p] ?? NaN;
+    if (isWithin(own, tolerance) && isWithin(parents, tolerance)) continue;
+    const middle = (own + parents) / 2;
+    area += (stretch.own[k] ?? NaN) * (partWithin(own, middle, tolerance) - Number(isWithin(own, tolerance)));
+    area +=
+      (stretch.parents[k] ?? NaN) * (partWithin(parents, middle, tolerance) - Number(isWithin(parents, tolerance)));
+  }
+  return area;
+}
+
+/** The share of a straight way from error a to error b that is within the tolerance. */
+function partWithin(a: Volt, b: Volt, tolerance: Volt): number {
+  if (a === b) return Number(isWithin(a, tolerance));
+  const low = (-tolerance - a) / (b - a);
+  const high = (tolerance - a) / (b - a);
+  return Math.max(0, Math.min(1, Math.max(low, high)) - Math.max(0, Math.min(low, high)));
+}
+
+function isWithin(error: Volt | undefined, tolerance: Volt): boolean {
+  return Math.abs(error ?? NaN) <= tolerance;
 }
 
 function sum(values: Float64Array): number {

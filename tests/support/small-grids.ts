@@ -38,6 +38,7 @@ export function smallGrid(compartments: readonly SmallCompartment[], reversals_m
     regionNames: ['all'],
     regionIndex: new Int32Array(count),
     regionArea: [area],
+    regionStretch: null,
     names: null,
     compartmentAt: () => {
       throw new Error('no sites in a small grid');

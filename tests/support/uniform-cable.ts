@@ -40,6 +40,7 @@ export function uniformCable(cable: Cable): Grid {
     regionNames: ['cable'],
     regionIndex: new Int32Array(count),
     regionArea: [filled(area)],
+    regionStretch: null,
     names: null,
     compartmentAt: () => 0,
   };
