@@ -6,6 +6,7 @@ import type { LaidSweep } from '../protocol/sweeps.ts';
 import type { PreparedPlan } from '../solver/prepare.ts';
 import type { SweepInput, SweepOutput, SweepState } from '../solver/run.ts';
 import { runSweep } from '../solver/sweep.ts';
+import { Refusal } from '../units/refuse.ts';
 import { fromSi } from '../units/si.ts';
 import { sweepClampMeter } from './clamp-sweep.ts';
 import type { RehearsedSweep, SweepRehearsal } from './sweep-rehearsal.ts';
@@ -27,6 +28,7 @@ export interface RehearsalHooks {
  */
 export function rehearseSweep(prepared: PreparedPlan, index: number, hooks: RehearsalHooks = {}): SweepRehearsal {
   const sweep = prepared.laidOut.sweep(index);
+  if (hooks.start === undefined && !isStartFound(prepared, hooks.cancelled)) return { kind: 'cancelled', sweep: index };
   const meter = sweepClampMeter(prepared, sweep);
   const input = withHooks(prepared.input(index, hooks.start), hooks, sweep.samples, meter?.onSample);
   const run = runSweep(input);
@@ -48,6 +50,17 @@ export function rehearseSweep(prepared: PreparedPlan, index: number, hooks: Rehe
     largestCurrent_pA: current.map((I) => fromSi(largest(I), 'pA')),
     end,
   };
+}
+
+/** False when it was cancelled on the way: a second of a cell that fires on its own takes its time. */
+function isStartFound(prepared: PreparedPlan, cancelled: (() => boolean) | undefined): boolean {
+  try {
+    prepared.start(cancelled);
+    return true;
+  } catch (error) {
+    if (error instanceof Refusal && error.data.code === 'job-cancelled') return false;
+    throw error;
+  }
 }
 
 /** Samples between two words of progress. */

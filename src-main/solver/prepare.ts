@@ -36,8 +36,8 @@ export interface PreparedPlan {
   readonly step: Second;
   /** Null when no pipette is in voltage clamp. */
   readonly clampWindow: Window | null;
-  /** Where a fresh sweep starts: found when first asked for, then shared by all sweeps. */
-  readonly start: () => Start;
+  /** Where a fresh sweep starts: found when first asked for, then shared by all sweeps. `cancelled` ends the search. */
+  readonly start: (cancelled?: () => boolean) => Start;
   /** What the solver needs for sweep `sweep`; `from` replaces the fresh start when sweeps carry over. */
   readonly input: (sweep: number, from?: SweepState) => SweepInput;
 }
@@ -79,7 +79,11 @@ export function preparePlan(plan: PlanDocument, options: PrepareOptions = {}): P
   const step = stepOf(plan, laidOut) / (options.stepDivisor ?? 1);
   const initialIndex = initialIndexOf(plan, grid, fineness);
   let found: Start | undefined;
-  const start = (): Start => (found ??= startOf({ plan, grid, kinetics, temperature, ...places, step, initialIndex }));
+  const start = (cancelled?: () => boolean): Start =>
+    (found ??= startOf({
+      ...{ plan, grid, kinetics, temperature, ...places, step, initialIndex },
+      ...(cancelled && { cancelled }),
+    }));
   return {
     plan,
     grid,

@@ -23,6 +23,8 @@ export interface StartInput {
   readonly step: Second;
   /** Index in the list of initial voltages for a compartment; by default its own. */
   readonly initialIndex?: (compartment: number) => number;
+  /** Polled during the search for the operating point; true ends it. */
+  readonly cancelled?: () => boolean;
 }
 
 /**
@@ -56,8 +58,9 @@ function atOperatingPoint(input: StartInput): Start {
  * @throws Refusal as `operatingPoint`.
  */
 export function operatingPointOf(input: Omit<StartInput, 'initialIndex'>): OperatingPoint {
-  const { grid, kinetics, temperature, step } = input;
-  return operatingPoint({ grid, kinetics, temperature, pipettes: heldPipettes(input), step });
+  const { grid, kinetics, temperature, step, cancelled } = input;
+  const pipettes = heldPipettes(input);
+  return operatingPoint({ grid, kinetics, temperature, pipettes, step, ...(cancelled && { cancelled }) });
 }
 
 /** The pipettes at the levels their lanes are held at. */

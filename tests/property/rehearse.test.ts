@@ -49,6 +49,23 @@ function done(prepared: PreparedPlan, sweep: number, start?: SweepState): Rehear
   return rehearsed;
 }
 
+describe('the search for where sweeps start', () => {
+  it('ends when the rehearsal is cancelled, and begins again with the next', () => {
+    // 1 nA makes the patch fire: a second is simulated, of which the cancel spares most.
+    const plan = planOf({
+      cell: squid,
+      pipettes: [{ letter: 'A', site: { compartment: 'patch' }, mode: 'current clamp' }],
+      lanes: [{ holding: 1000, blocks: [hold('rest', 5)] }],
+    });
+    const prepared = preparePlan(plan);
+    let polls = 0;
+    expect(rehearseSweep(prepared, 0, { cancelled: () => (polls += 1) > 5 })).toEqual({ kind: 'cancelled', sweep: 0 });
+    expect(polls).toBe(6);
+    expect(done(prepared, 0).kind).toBe('done');
+    expect(prepared.start().firesOnItsOwn).toBe(true);
+  });
+});
+
 describe('the interval between sweeps that carry over', () => {
   it('leaves the cell as a sweep does that is held as long', () => {
     const carried = done(preparePlan(spiking({ carryOver: true, sweepInterval_ms: 20 })), 0).end;

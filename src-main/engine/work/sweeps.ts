@@ -3,7 +3,6 @@ import { rehearseSweep } from '../../forecast/rehearse.ts';
 import type { PreparedPlan } from '../../solver/prepare.ts';
 import type { SweepState } from '../../solver/run.ts';
 import { plain } from '../../units/format.ts';
-import { Refusal } from '../../units/refuse.ts';
 import type { WorkAnswer, WorkHooks, WorkQuestion } from '../work.ts';
 import { prepared } from './prepared.ts';
 
@@ -14,16 +13,6 @@ export function sweeps(
 ): WorkAnswer<'sweeps'> {
   // One that waited its turn while its job was cancelled: to make the plan ready may take seconds.
   if (hooks.cancelled()) return { kind: 'cancelled' };
-  try {
-    return inOrder({ sent, sweeps: wanted }, hooks);
-  } catch (error) {
-    // Cancelled while its start was searched for, where there is no sweep yet to answer for.
-    if (error instanceof Refusal && error.data.code === 'job-cancelled') return { kind: 'cancelled' };
-    throw error;
-  }
-}
-
-function inOrder({ sent, sweeps: wanted }: WorkQuestion<'sweeps'>, hooks: WorkHooks<'sweeps'>): WorkAnswer<'sweeps'> {
   const plan = prepared(sent);
   const { carryOver } = sent.plan.protocol;
   let before: SweepState | undefined;
