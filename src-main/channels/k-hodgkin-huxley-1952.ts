@@ -1,5 +1,5 @@
-import type { Kinetics } from './kinetics.ts';
-import { kineticsOf } from './own.ts';
+import type { StoredChannel } from './kinetics.ts';
+import { storedChannel } from './stored.ts';
 
 /**
  * Delayed-rectifier potassium conductance of the squid giant axon, I = g·n⁴·(V − E), E = −77 mV, V absolute with rest
@@ -12,18 +12,22 @@ import { kineticsOf } from './own.ts';
  * @source Hodgkin AL, Huxley AF (1952), J Physiol 117:500–544, eqs 12, 13, Table 3 (read in later texts that restate
  *         them; numbering and Q10 from memory).
  */
-export const kHodgkinHuxley1952: Kinetics = kineticsOf({
+export const kHodgkinHuxley1952: StoredChannel = storedChannel({
   name: 'k-hodgkin-huxley-1952',
+  ion: 'K',
+  title: 'K, Hodgkin & Huxley 1952',
   reversal_mV: -77,
+  measuredAt_C: 6.3,
   gates: [
     {
       name: 'n',
       power: 4,
       q10: 3,
-      q10Reference_C: 6.3,
       alpha: { kind: 'linexp', A: 0.01, V0: -55, k: 10 },
       beta: { kind: 'exp', A: 0.125, V0: -65, k: -80 },
     },
   ],
   source: 'Hodgkin AL, Huxley AF (1952), J Physiol 117:500–544',
+  fromMemory: false,
+  note: 'Squid giant axon, delayed rectifier, rest at −65 mV. Q10 from memory.',
 });
