@@ -121,7 +121,9 @@ export interface Forecast {
   readonly dualSite: DualSite | null;
   readonly readings: readonly ReadingForecast[];
   readonly pipettes: readonly PipetteForecast[];
-  /** Plain sentences a user must see: assumptions, cautions, refusals of parts. */
+  /** Plain sentences that put figures in doubt, such as membrane that fires under the clamp. */
+  readonly cautions: readonly string[];
+  /** Plain sentences a user must see: assumptions, refusals of parts. */
   readonly notes: readonly string[];
   readonly numerical: {
     readonly state: 'pending' | 'computed';

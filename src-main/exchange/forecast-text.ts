@@ -24,6 +24,7 @@ export function forecastText({ summary, forecast }: StoredRehearsal): string {
     ...(clamp ? clampLines(clamp, forecast.numerical) : []),
     ...attenuationLines(forecast),
     ...forecast.readings.flatMap(readingLines),
+    ...forecast.cautions.map((caution) => `Caution: ${caution}`),
     ...forecast.notes.map((note) => `- ${note}`),
     '',
   ].join('\n');

@@ -5,6 +5,7 @@ import { clampBandwidth } from '../rig/pipette.ts';
 import type { PreparedPlan } from '../solver/prepare.ts';
 import { fromSi, toSi, type Volt } from '../units/si.ts';
 import { dualSiteOf } from './attenuation.ts';
+import { firingCautions } from './cautions.ts';
 import { clampTarget, referenceClamp } from './clamp-sweep.ts';
 import { forecastNotes } from './notes.ts';
 import { reachByRegion, trustDistance } from './reach.ts';
@@ -23,6 +24,7 @@ export function gatherForecast(prepared: PreparedPlan, sweeps: readonly SweepReh
     dualSite: dual.figures,
     readings: readingForecasts(prepared, done),
     pipettes: pipetteForecasts(prepared, done),
+    cautions: firingCautions(prepared.grid, clamp?.sweeps ?? []),
     notes: [...forecastNotes(prepared, done), ...dual.notes],
     numerical: { state: 'pending', clampError_mV: null, reach: null },
   };
@@ -33,7 +35,7 @@ function clampForecast(prepared: PreparedPlan, done: readonly RehearsedSweep[]):
   const sweeps = done.flatMap(({ clamp }) => (clamp === null ? [] : [clamp]));
   const [first, ...others] = sweeps;
   if (pipette === undefined || first === undefined) return null;
-  const worst = others.reduce((a, b) => (b.reach < a.reach ? b : a), first);
+  const worst = others.reduce((a, b) => (isWorse(b, a) ? b : a), first);
   const { grid, plan } = prepared;
   const trust = sweeps.flatMap((sweep) => trustDistance(grid, inVolts(sweep), toleranceIn(prepared, sweep)) ?? []);
   const parts = sweeps.map(({ accessPart_mV }) => accessPart_mV);
@@ -51,6 +53,15 @@ function clampForecast(prepared: PreparedPlan, done: readonly RehearsedSweep[]):
     trustDistance_um: trust.length === 0 ? null : fromSi(Math.min(...trust), 'um'),
     accessError_mV: parts.reduce((far, part) => (Math.abs(part) > Math.abs(far) ? part : far), 0),
   };
+}
+
+/** Less reach; of sweeps with the same reach, often none at all, the one with the larger error. */
+function isWorse(a: ClampSweep, b: ClampSweep): boolean {
+  return a.reach === b.reach ? largestError(a) > largestError(b) : a.reach < b.reach;
+}
+
+function largestError({ steady_mV }: ClampSweep): number {
+  return steady_mV.reduce((most, error) => Math.max(most, Math.abs(error)), 0);
 }
 
 function inVolts({ steady_mV }: ClampSweep): Float64Array {

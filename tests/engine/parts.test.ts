@@ -77,6 +77,7 @@ describe('numerical uncertainty', () => {
     dualSite: null,
     readings: [],
     pipettes: [],
+    cautions: [],
     notes: ['A note.'],
     numerical: { state: 'pending', clampError_mV: null, reach: null },
   });
@@ -140,6 +141,7 @@ describe('numerical uncertainty', () => {
         dualSite: null,
         readings: [reading],
         pipettes: [],
+        cautions: [],
         notes: [],
         numerical: { state: 'pending', clampError_mV: null, reach: null },
       };

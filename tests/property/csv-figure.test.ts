@@ -6,6 +6,7 @@ import { axisOver } from '../../src-main/exchange/figure-axis.ts';
 import { curvePath, type Frame } from '../../src-main/exchange/figure-curve.ts';
 import { figureSvg } from '../../src-main/exchange/figure-svg.ts';
 import { forecastToJson } from '../../src-main/exchange/forecast-json.ts';
+import { refusalsOf } from '../support/refusals.ts';
 import { clampProtocol, hold, step } from '../support/protocols.ts';
 
 function trace(sweep: number, key: string, unit: Trace['unit'], values: readonly number[], interval_ms = 0.02): Trace {
@@ -55,6 +56,7 @@ const stored = (name = 'Na & K <test>'): StoredRehearsal => ({
     dualSite: null,
     readings: [],
     pipettes: [],
+    cautions: [],
     notes: ['a note'],
     numerical: { state: 'pending', clampError_mV: null, reach: null },
   },
@@ -67,6 +69,13 @@ describe('traces as CSV', () => {
     trace(1, 'membrane:tip, "far"', 'mV', [-70.00000000000001, -69.123456789012, 0]),
     trace(0, 'recording:A', 'pA', [3, 4, 5]),
   ];
+
+  it('is refused where one text could not hold a sweep', () => {
+    const long = { ...trace(3, 'recording:A', 'pA', []), values: new Float64Array(13_000_000) };
+    expect(refusalsOf(() => tracesToCsv({ name: 'long' }, [long]))).toEqual([
+      expect.objectContaining({ code: 'too-large', place: 'sweep 4', value: expect.stringContaining('13000000 rows') }),
+    ]);
+  });
 
   it('one file per sweep, in order, named for the plan', () => {
     const names = tracesToCsv({ name: 'Sodium: soma, 12 MΩ' }, traces).map(({ name }) => name);

@@ -17,6 +17,7 @@ const forecast: Forecast = {
     },
   ],
   pipettes: [],
+  cautions: [],
   notes: ['made up for a test'],
   numerical: { state: 'pending', clampError_mV: null, reach: null },
 };
