@@ -10,7 +10,8 @@ export class Faults {
   }
 
   addAll(found: readonly RefusalData[]): void {
-    this.#found.push(...found);
+    // Not push(...found): a call takes only so many arguments, and a list may hold a million faults.
+    for (const fault of found) this.#found.push(fault);
   }
 
   /** Runs `work`; the faults of a Refusal it throws are gathered and the answer is undefined. Other errors pass on. */
@@ -19,7 +20,7 @@ export class Faults {
       return work();
     } catch (error) {
       if (!(error instanceof Refusal)) throw error;
-      this.#found.push(...error.all);
+      this.addAll(error.all);
       return undefined;
     }
   }

@@ -170,6 +170,14 @@ describe('a protocol that is too large', () => {
   });
 });
 
+it('tells each of 200 000 faults', () => {
+  if (!('compartments' in plan.cell)) throw new Error('the small plan is a sketch');
+  const couplings = Array.from({ length: 200_000 }, (_, n): [string, string, number] => ['soma', `nowhere ${n}`, 1]);
+  const { refusals } = checkPlan({ plan: { ...plan, cell: { ...plan.cell, couplings_nS: couplings } } });
+  expect(refusals).toHaveLength(200_000);
+  expect(refusals.at(-1)).toMatchObject({ code: 'name-unknown', place: 'cell.couplings_nS[199999][1]' });
+});
+
 describe('a file that is too large, or no file', () => {
   const shaped = {
     kind: 'cell',
