@@ -14,6 +14,7 @@ export const applicationId = 0x486f6c64;
  * @source SQLite, "Database File Format", section 1.3.
  */
 export function inspectFile(path: string): void {
+  if (!mayBeFile(path)) return refuseOther(path);
   const { header, size } = readHeader(path);
   if (header.length < 100 || header.toString('latin1', 0, 16) !== 'SQLite format 3\0') return refuseOther(path);
   if (header.readUInt32BE(68) !== applicationId) return refuseOther(path);
@@ -43,6 +44,15 @@ export function refuseNewerNotebook(path: string, format: number): void {
   });
 }
 
+/** To open a pipe would wait for someone to write into it. What cannot be looked at says why when it is opened. */
+function mayBeFile(path: string): boolean {
+  try {
+    return statSync(path).isFile();
+  } catch {
+    return true;
+  }
+}
+
 function readHeader(path: string): { header: Buffer; size: number } {
   try {
     const file = openSync(path, 'r');
@@ -59,7 +69,6 @@ function readHeader(path: string): { header: Buffer; size: number } {
       const remedy = 'choose a notebook that is there';
       return refuse('file-not-found', { thing: 'notebook', place: path, value: 'missing', remedy });
     }
-    if (code === 'EISDIR') return refuseOther(path);
     const remedy = 'check that you may read it';
     return refuse('file-unreadable', { thing: 'notebook', place: path, value: code ?? 'unreadable', remedy });
   }

@@ -1,5 +1,6 @@
 // One fault at a time: the notebook is whole after each, and says in words what happened.
 import Database from 'better-sqlite3';
+import { execFileSync } from 'node:child_process';
 import { mkdirSync, readFileSync, readdirSync, truncateSync, writeFileSync } from 'node:fs';
 import { dirname } from 'node:path';
 import { describe, expect, it } from 'vitest';
@@ -164,6 +165,11 @@ describe('a file that cannot be opened', () => {
     mkdirSync(at('folder.holdfast'));
     expect(refusalsOf(() => openNotebook(at('folder.holdfast')))[0]?.code).toBe('file-not-a-notebook');
     expect(refusalsOf(() => openNotebook(at('none.holdfast')))[0]?.code).toBe('file-not-found');
+  });
+
+  it.runIf(process.platform !== 'win32')('is refused at once when it is a pipe that nobody writes into', () => {
+    execFileSync('mkfifo', [at('pipe.holdfast')]);
+    expect(refusalsOf(() => openNotebook(at('pipe.holdfast')))[0]?.code).toBe('file-not-a-notebook');
   });
 
   /** Puts a spoilt file at `path` and gives the code it is to be refused with. */
