@@ -1,6 +1,7 @@
 // Traces as tables for any spreadsheet or script: one file per sweep, one column per trace.
 import type { TextFile } from '../contract/requests.ts';
 import type { Trace } from '../contract/results.ts';
+import { refuse } from '../units/refuse.ts';
 
 /**
  * CSV files of a rehearsal's traces, one per sweep. First column `time_ms` from the sweep's start; then one column per
@@ -9,6 +10,7 @@ import type { Trace } from '../contract/results.ts';
  *
  * Traces of one sweep that start or step differently get their own file.
  *
+ * @throws Refusal `too-large` for a sweep of more than 25 million fields.
  * @source RFC 4180 (2005): lines end in CR LF; names with a comma or quote are quoted.
  */
 export function tracesToCsv(plan: { readonly name: string }, traces: readonly Trace[]): TextFile[] {
@@ -28,6 +30,20 @@ export function tracesToCsv(plan: { readonly name: string }, traces: readonly Tr
   });
 }
 
+/** A field takes 17 characters at most, "-1.234567891e-123", and its comma. A text holds 2²⁹ characters, ours to be safe fewer. */
+const mostFields = 25_000_000;
+
+/** @throws Refusal `too-large` for a table that one text could not hold. */
+function refuseTooLong(sweep: number, rows: number, columns: number): void {
+  if (rows * columns <= mostFields) return;
+  refuse('too-large', {
+    thing: 'table of traces',
+    place: `sweep ${sweep + 1}`,
+    value: `${rows} rows of ${columns} columns, at most ${mostFields} fields`,
+    remedy: 'sample more coarsely, or split the sweep into several',
+  });
+}
+
 function sweepOf(table: readonly Trace[]): number {
   return table[0]?.sweep ?? 0;
 }
@@ -36,6 +52,7 @@ function tableText(table: readonly Trace[]): string {
   const first = table[0];
   if (first === undefined) return '';
   const rows = Math.max(...table.map(({ values }) => values.length));
+  refuseTooLong(first.sweep, rows, table.length + 1);
   const lines = [['time_ms', ...table.map(({ key, unit }) => quoted(`${key} (${unit})`))].join(',')];
   for (let i = 0; i < rows; i += 1) {
     const time = number(first.start_ms + i * first.interval_ms);
