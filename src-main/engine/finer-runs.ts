@@ -18,11 +18,15 @@ export interface FinerRun {
   readonly forecast: Forecast;
 }
 
+type Place = Pick<FinerRun, 'notebook' | 'rehearsalId'>;
+
 /** Tells by a `numerical` event that a rehearsal's uncertainty is settled: read it again, it may have stayed pending. */
 export class FinerRuns {
   readonly #pool: Pool;
   readonly #emit: (event: EngineEvent) => void;
   readonly #waiting: FinerRun[] = [];
+  /** Failed ones among them: asked for again, they would only fail again. */
+  readonly #settled: Place[] = [];
   #running: Run | null = null;
   #paused = false;
   #stopped = false;
@@ -39,7 +43,10 @@ export class FinerRuns {
     });
   }
 
+  /** Adds a run, unless the same waits, runs, or has come to its end before. */
   add(run: FinerRun): void {
+    const isSame = ({ notebook, rehearsalId }: Place) => notebook === run.notebook && rehearsalId === run.rehearsalId;
+    if (this.#waiting.some(isSame) || this.#settled.some(isSame)) return;
     this.#waiting.push(run);
     this.#next();
   }
@@ -89,7 +96,10 @@ export class FinerRuns {
       if (!this.#stopped) console.error('finer run:', cause);
     }
     const settled = this.#waiting.shift();
-    if (settled) this.#emit({ event: 'numerical', rehearsalId: settled.rehearsalId });
+    if (!settled) return;
+    const { notebook, rehearsalId } = settled;
+    this.#settled.push({ notebook, rehearsalId });
+    this.#emit({ event: 'numerical', rehearsalId });
   }
 
   #keep(run: FinerRun, fine: Forecast): void {
