@@ -3,7 +3,7 @@ import type { ClampSweep } from '../contract/results.ts';
 import { commandBreaks, levelBetween } from '../protocol/command-course.ts';
 import type { CommandPiece } from '../protocol/command.ts';
 import type { LaidSweep } from '../protocol/sweeps.ts';
-import { blockOfEdge, resolveWindow, type TimeWindow } from '../protocol/window.ts';
+import { blockWithin, resolveWindow, type TimeWindow } from '../protocol/window.ts';
 import type { PlacedPipette, PreparedPlan } from '../solver/prepare.ts';
 import { fromSi, toSi, type Second, type Volt } from '../units/si.ts';
 import { clampMeter } from './clamp-error.ts';
@@ -26,7 +26,7 @@ export interface ClampTarget {
   readonly pipette: PlacedPipette;
   readonly command: readonly CommandPiece[];
   readonly window: TimeWindow;
-  /** Start of the block the window begins on. */
+  /** Start of the block the window begins in. */
   readonly blockStart: Second;
   /** The one level of the window, V; null where there are several. */
   readonly level: Volt | null;
@@ -43,7 +43,7 @@ export function clampTarget(prepared: ClampPlan, sweep: LaidSweep): ClampTarget 
   const lane = sweep.lanes.find((candidate) => candidate.pipette === pipette?.letter);
   if (pipette === undefined || lane === undefined || clampWindow === null) return null;
   const window = resolveWindow(clampWindow, sweep);
-  const block = blockOfEdge(clampWindow, 'from', sweep);
+  const block = blockWithin(clampWindow, sweep);
   if (window === undefined || block === undefined || !(window.to > window.from)) return null;
   const level = levelBetween(lane.command, window.from, window.to, laidOut.sampling);
   const target = level ?? lastLevel(lane.command, window.to, laidOut.sampling);

@@ -27,6 +27,20 @@ export function windowTicks(window: Window, sweep: BlocksByLane): { from: Tick; 
   return from === undefined || to === undefined ? undefined : { from, to };
 }
 
+/**
+ * The block that a window begins in: on a border, the one that begins there. It need not be the block that the window's
+ * edge hangs on: "from the end of the hold" is in the step after it.
+ */
+export function blockWithin(window: Window, sweep: BlocksByLane): LaidBlock | undefined {
+  const from = edgeTick(window, 'from', sweep);
+  const lane = sweep.lanes.find((candidate) => candidate.pipette === window.lane);
+  if (from === undefined || lane === undefined) return undefined;
+  // After the last block the lane is held, without a block of its own.
+  return (
+    lane.blocks.find((laid) => from >= laid.startTick && from < laid.endTick) ?? blockOfEdge(window, 'from', sweep)
+  );
+}
+
 /** The block a window's edge hangs on, as it lies in this sweep. */
 export function blockOfEdge(window: Window, edge: 'from' | 'to', sweep: BlocksByLane): LaidBlock | undefined {
   const lane = sweep.lanes.find((candidate) => candidate.pipette === window.lane);

@@ -120,6 +120,19 @@ describe('a sphere behind an access resistance', () => {
     expect(clamp.sweeps[2]!.settling_ms[0]).toBeNaN();
   });
 
+  it('settling counts from the block the window begins in, whichever edge the window hangs on', () => {
+    const settled = (from: unknown): number[] => {
+      const given = plan({ unit: 'mV', value: 5 });
+      const to = { block: 'test', edge: 'end', offset_ms: 0 };
+      const clampWindow = { lane: 'A', from, to } as PlanDocument['clampWindow'];
+      return forecastOf({ ...given, ...(clampWindow && { clampWindow }) }).clamp.sweeps.map((s) => s.settling_ms[0]!);
+    };
+    const usual = settled({ block: 'test', edge: 'start', offset_ms: 0 });
+    expect(usual[1]).toBeGreaterThan(0);
+    expect(settled({ block: 'before', edge: 'end', offset_ms: 0 })).toEqual(usual);
+    expect(settled({ block: 'after', edge: 'start', offset_ms: -3 })).toEqual(usual);
+  });
+
   it('a tolerance in per cent is of |level − holding| and leaves the step of zero out', () => {
     const { clamp, forecast } = forecastOf(plan({ unit: '%', value: 7 }));
     // Errors of 2.96 of 40 mV (7.4 %) and 5.32 of 80 (6.65 %).
