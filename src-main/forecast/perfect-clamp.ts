@@ -1,6 +1,6 @@
 // The truth a voltage clamp is held against: the same membrane, all of it on command at once.
 import type { Grid } from '../cell/grid.ts';
-import type { Gate, Kinetics } from '../channels/kinetics.ts';
+import { isInstant, type Gate, type Kinetics } from '../channels/kinetics.ts';
 import type { CommandPiece } from '../protocol/command.ts';
 import { fromSi, type Ampere, type Second, type Siemens, type Volt } from '../units/si.ts';
 
@@ -11,6 +11,8 @@ interface WholeChannel {
   /** Σ G·E, A. With it, any number of reversal potentials costs one product. */
   readonly GE: Ampere;
   readonly gates: readonly Gate[];
+  /** Per gate: whether it follows the voltage at once, and needs no state. */
+  readonly instant: readonly boolean[];
   readonly x: Float64Array;
 }
 
@@ -59,10 +61,13 @@ export function perfectClamp(input: PerfectClampInput): PerfectClamp {
     }
   };
   const current = (V: Volt): Ampere => {
+    const mV = fromSi(V, 'mV');
     let total = 0;
-    for (const { G, GE, gates, x } of channels) {
+    for (const { G, GE, gates, instant, x } of channels) {
       let open = 1;
-      for (let g = 0; g < gates.length; g += 1) open *= (x[g] ?? NaN) ** (gates[g]?.power ?? 1);
+      gates.forEach((gate, g) => {
+        open *= (instant[g] === true ? gate.inf(mV) : (x[g] ?? NaN)) ** gate.power;
+      });
       total += open * (V * G - GE);
     }
     return total;
@@ -122,6 +127,7 @@ function wholeChannels({ grid, kinetics, start }: PerfectClampInput): WholeChann
       G,
       GE,
       gates,
+      instant: gates.map(isInstant),
       x: Float64Array.from(gates, (gate) => gate.inf(fromSi(from, 'mV'))),
     }));
   });

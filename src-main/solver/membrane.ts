@@ -1,6 +1,6 @@
 // The membrane of a sweep: gated channels with their states, and what they put into the rows of the system.
 import type { Grid } from '../cell/grid.ts';
-import type { Gate, Kinetics } from '../channels/kinetics.ts';
+import { isInstant, type Gate, type Kinetics } from '../channels/kinetics.ts';
 import type { Ampere, Second, Volt } from '../units/si.ts';
 import { advancedGate, chooseRows, gateRows, type GateRows } from './gate-rows.ts';
 import type { SweepState } from './run.ts';
@@ -9,10 +9,12 @@ import type { SweepState } from './run.ts';
 export interface GatedChannel {
   readonly name: string;
   readonly gates: readonly Gate[];
+  /** Per gate: whether it follows the voltage at once. */
+  readonly instant: readonly boolean[];
   readonly at: Int32Array;
   readonly G: Float64Array;
   readonly E: Float64Array;
-  /** Per gate. */
+  /** Per gate; of an instant one its value at the beginning of the last step. */
   readonly states: readonly Float64Array[];
   /** Number of its first gate among all gates of the cell. */
   readonly firstGate: number;
@@ -63,6 +65,7 @@ export function membraneOf(input: {
     return {
       name: channel.name,
       gates: channel.kinetics.gates,
+      instant: channel.kinetics.gates.map(isInstant),
       at,
       G: Float64Array.from(at, (k) => channel.conductance[k]!),
       E: Float64Array.from(at, (k) => channel.reversal[k]!),
@@ -79,13 +82,19 @@ export function membraneOf(input: {
   return { channels, rows, row: new Int32Array(grid.count), part: new Float64Array(grid.count) };
 }
 
-/** Takes all gates forward by `advance` at the voltages V, and adds the open channels to the rows: D += g, R += g·E. */
+/**
+ * Takes all gates forward by `advance` at the voltages V, and adds the open channels to the rows: D += g, R += g·E.
+ *
+ * @param lead how far the middle of the step lies beyond V, in lengths of the step before; 0 after a break. An instant
+ *        gate goes there along the line through its last two values: at V alone it would be half a step late.
+ */
 export function advanceGates(
   membrane: Membrane,
   advance: Second,
   V: Float64Array,
   D: Float64Array,
   R: Float64Array,
+  lead: number,
 ): void {
   if (membrane.channels.length === 0) return;
   const { rows, row, part } = membrane;
@@ -93,9 +102,10 @@ export function advanceGates(
   for (let c = 0; c < membrane.channels.length; c++) {
     const channel = membrane.channels[c]!;
     const column = 4 * channel.firstGate;
-    if (channel.gates.length === 1) advanceOne(channel, column, rows.values, row, part, D, R);
+    if (channel.instant.includes(true)) advanceMany(channel, column, rows.values, row, part, D, R, lead);
+    else if (channel.gates.length === 1) advanceOne(channel, column, rows.values, row, part, D, R);
     else if (channel.gates.length === 2) advanceTwo(channel, column, rows.values, row, part, D, R);
-    else advanceMany(channel, column, rows.values, row, part, D, R);
+    else advanceMany(channel, column, rows.values, row, part, D, R, lead);
   }
 }
 
@@ -159,8 +169,9 @@ function advanceMany(
   part: Float64Array,
   D: Float64Array,
   R: Float64Array,
+  lead: number,
 ): void {
-  const { at, G, E, gates, states } = channel;
+  const { at, G, E, gates, instant, states } = channel;
   for (let i = 0; i < at.length; i++) {
     const k = at[i]!;
     const f = part[k]!;
@@ -168,9 +179,11 @@ function advanceMany(
     for (let s = 0; s < gates.length; s++) {
       const t = row[k]! + column + 4 * s;
       const X = states[s]!;
-      const x = X[i]! * (T[t]! + f * T[t + 1]!) + (T[t + 2]! + f * T[t + 3]!);
+      const before = X[i]!;
+      const x = before * (T[t]! + f * T[t + 1]!) + (T[t + 2]! + f * T[t + 3]!);
       X[i] = x;
-      g *= raised(x, gates[s]!.power);
+      const middle = instant[s]! ? Math.min(1, Math.max(0, x + lead * (x - before))) : x;
+      g *= raised(middle, gates[s]!.power);
     }
     D[k] = D[k]! + g;
     R[k] = R[k]! + g * E[i]!;
@@ -194,9 +207,9 @@ export function channelCurrent(membrane: Membrane, channel: GatedChannel, i: num
   let g = channel.G[i]!;
   for (let s = 0; s < channel.gates.length; s++) {
     const gate = channel.gates[s]!;
-    const x = channel.states[s]![i]!;
+    const x = channel.instant[s]! ? gate.inf(1e3 * V) : channel.states[s]![i]!;
     const factor = membrane.rows.factors[channel.firstGate + s]!;
-    g *= raised(ahead === 0 ? x : advancedGate(gate, factor, x, V, ahead), gate.power);
+    g *= raised(ahead === 0 || channel.instant[s]! ? x : advancedGate(gate, factor, x, V, ahead), gate.power);
   }
   return g * (V - channel.E[i]!);
 }

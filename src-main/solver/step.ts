@@ -12,6 +12,8 @@ export interface StepPlace {
   readonly end: Second;
   /** How far the gates go: from the middle of the step before to the middle of this one. */
   readonly advance: Second;
+  /** The middle of this step, in lengths of the step before; 0 after a break. */
+  readonly lead: number;
 }
 
 /** Ideal clamps put their compartments where the command is. */
@@ -24,7 +26,7 @@ export function impose(electrodes: readonly Electrode[], V: Float64Array, time: 
 /** Takes the gates alone forward, at the present voltages. */
 export function bringGatesUp(work: Workspace, advance: Second): void {
   // The rows that the gates fill are scratch here.
-  if (advance > 0) advanceGates(work.membrane, advance, work.V, work.D, work.R);
+  if (advance > 0) advanceGates(work.membrane, advance, work.V, work.D, work.R, 0);
 }
 
 /**
@@ -42,7 +44,7 @@ export function plainStep(work: Workspace, at: StepPlace): boolean {
     D[k] = fixedD[k]! + c;
     R[k] = fixedR[k]! + c * V[k]!;
   }
-  advanceGates(work.membrane, at.advance, V, D, R);
+  advanceGates(work.membrane, at.advance, V, D, R, at.lead);
   addPivots(electrodes, D, weight);
   addCommands(electrodes, D, R, middle, weight);
   eliminate(tree, D, R, inverse);
@@ -71,7 +73,7 @@ export function dampedStep(work: Workspace, at: StepPlace, elapsed: Second, regu
   const { V, D, R, openD, openR, fixedD, fixedR } = work;
   D.set(fixedD);
   R.set(fixedR);
-  advanceGates(work.membrane, at.advance, V, D, R);
+  advanceGates(work.membrane, at.advance, V, D, R, at.lead);
   openD.set(D);
   openR.set(R);
   let finite = true;

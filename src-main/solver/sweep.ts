@@ -100,7 +100,8 @@ export function runSweep(input: SweepInput): SweepResult {
       rest = 0;
     }
     const end = toStop ? ahead.time : timeOfStep(timeline, done);
-    const at = { time, h, end, advance: before === h ? h : (before + h) / 2 };
+    const lead = before === 0 ? 0 : h / (2 * before);
+    const at = { time, h, end, advance: before === h ? h : (before + h) / 2, lead };
     const finite =
       sinceBreak < dampedSteps - 1e-9 ? dampedStep(work, at, sinceBreak * step, step) : plainStep(work, at);
     if (!finite) {
