@@ -14,8 +14,11 @@ export function check(args: string[]): number {
   const files = args.filter((arg) => !arg.startsWith('--'));
   const options = args.filter((arg) => arg.startsWith('--'));
   const [file, ...more] = files;
-  if (file === undefined || more.length > 0 || options.some((option) => option !== '--json')) {
-    process.stderr.write(`${usage}\n`);
+  const unknown = options.find((option) => option !== '--json') ?? more[0];
+  if (file === undefined || unknown !== undefined) {
+    process.stderr.write(
+      `${unknown === undefined ? 'No file is named.' : `"${unknown}" is not understood.`}\n\n${usage}\n`,
+    );
     return 2;
   }
   try {

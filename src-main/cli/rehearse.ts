@@ -36,12 +36,14 @@ class Refused extends Error {
 /**
  * Runs the command. Progress with the time left goes to standard error, the forecast in short to standard output.
  *
+ * Interrupted before the sweeps are done it writes nothing; after that it writes what it has, without the uncertainty.
+ *
  * @returns the exit code: 0 done; 1 the run stopped or was interrupted; 2 the command line, the plan or a file was refused.
  */
 export async function rehearse(args: string[]): Promise<number> {
   const wishes = wishesFrom(args);
-  if (!wishes) {
-    process.stderr.write(`${usage}\n`);
+  if (typeof wishes === 'string') {
+    process.stderr.write(`${wishes}\n\n${usage}\n`);
     return 2;
   }
   const scratch = mkdtempSync(join(tmpdir(), 'holdfast-'));
@@ -59,7 +61,8 @@ export async function rehearse(args: string[]): Promise<number> {
   }
 }
 
-function wishesFrom(args: string[]): Wishes | null {
+/** What the command line asks for, or what is wrong with it. */
+function wishesFrom(args: string[]): Wishes | string {
   try {
     const { values, positionals } = parseArgs({
       args,
@@ -71,11 +74,14 @@ function wishesFrom(args: string[]): Wishes | null {
       },
     });
     const [plan, ...more] = positionals;
-    if (plan === undefined || more.length > 0 || values.out === undefined || values.out === '') return null;
+    if (plan === undefined) return 'No plan is named.';
+    if (more.length > 0) return `One plan at a time: "${more[0]}" is one too many.`;
+    if (values.out === undefined || values.out === '') return 'No folder is named: --out FOLDER is missing.';
     return { plan, out: values.out, notebook: values.notebook, replace: values.replace };
-  } catch {
-    // An option that does not exist, or one without its value.
-    return null;
+  } catch (error) {
+    // An option that does not exist, or one without its value: Node says which in its first sentence.
+    if (!(error instanceof TypeError)) throw error;
+    return `${error.message.split('. ')[0]}.`;
   }
 }
 
@@ -91,17 +97,17 @@ async function run(engine: Engine, wishes: Wishes, scratch: string): Promise<num
   const line = new ProgressLine(process.stderr);
   const jobId = 'command';
   const settled = numericalSettled(engine, line);
-  const interrupt = () => void engine.ask('job cancel', { jobId });
-  process.once('SIGINT', interrupt);
+  const interrupted = new Promise<void>((resolve) => process.once('SIGINT', () => resolve()));
+  void interrupted.then(() => engine.ask('job cancel', { jobId }));
   const outcome = accepted(await engine.ask('rehearsal start', { jobId, planId, plan }));
-  process.removeListener('SIGINT', interrupt);
   if (outcome.kind !== 'finished') {
     line.end();
     const words = outcome.kind === 'cancelled' ? 'interrupted: nothing was written' : refusalWords([outcome.refusal]);
     process.stderr.write(`${words}\n`);
     return 1;
   }
-  await settled;
+  // What is finished is not thrown away with what was still to come: it says "not computed" instead.
+  await Promise.race([settled, interrupted]);
   line.end();
   await write(engine, wishes, outcome.rehearsalId);
   return 0;

@@ -6,7 +6,7 @@ import { describe, expect, it } from 'vitest';
 import { openNotebook } from '../../src-main/notebook/open.ts';
 import { notebookOverview } from '../../src-main/notebook/overview.ts';
 import { testFolder } from '../support/folder.ts';
-import { smallPlan } from '../support/small-plans.ts';
+import { longPlan, smallPlan } from '../support/small-plans.ts';
 
 const at = testFolder();
 const main = fileURLToPath(new URL('../../src-main/cli/main.ts', import.meta.url));
@@ -79,6 +79,34 @@ describe('holdfast rehearse', () => {
     notebook.close();
   });
 
+  it.runIf(process.platform !== 'win32')(
+    'writes a finished rehearsal when it is interrupted over the numerical uncertainty',
+    async () => {
+      const plan = planFile('long.plan.json', longPlan(10));
+      const child = spawn(process.execPath, [
+        '--input-type=module',
+        '-e',
+        program,
+        'rehearse',
+        plan,
+        '--out',
+        at('out'),
+      ]);
+      let out = '';
+      let interrupted = false;
+      child.stdout.on('data', (data: Buffer) => (out += data.toString()));
+      child.stderr.on('data', (data: Buffer) => {
+        if (interrupted || !data.toString().includes('numerical uncertainty: ')) return;
+        interrupted = child.kill('SIGINT');
+      });
+      const code = await new Promise<number | null>((resolve) => child.once('close', resolve));
+      expect({ code, interrupted }).toEqual({ code: 0, interrupted: true });
+      // Computed or not: the finer run may end while files are written.
+      expect(out).toMatch(/Numerical uncertainty +\S/);
+      expect(readdirSync(at('out'))).toContain('long-steps-forecast.json');
+    },
+  );
+
   it('refuses a plan with every fault in words, and exits with 2', async () => {
     const bad = { ...smallPlan(), tolerance: { unit: 'mV', value: -1 }, rig: { file: 'rig.json' }, mood: 'good' };
     const found = await holdfast('rehearse', planFile('bad.plan.json', bad), '--out', at('out'));
@@ -93,12 +121,16 @@ describe('holdfast rehearse', () => {
     expect(without.errors).toContain(`file at ${at('rig.json')} is missing`);
   });
 
-  it.each([[[]], [['a.json']], [['a.json', '--out']], [['a.json', '--out', 'x', '--fast']]])(
-    'says how it is used when it is not: %j',
-    async (args) => {
-      const { code, errors } = await holdfast('rehearse', ...args);
-      expect(code).toBe(2);
-      expect(errors).toContain('usage: holdfast rehearse PLAN.json --out FOLDER');
-    },
-  );
+  it.each([
+    [[], 'No plan is named.'],
+    [['a.json'], '--out FOLDER is missing'],
+    [['a.json', '--out'], '--out'],
+    [['a.json', '--out', 'x', '--fast'], '--fast'],
+    [['a.json', 'b.json', '--out', 'x'], 'b.json'],
+  ])('says what is wrong with the line %j, and how it is used', async (args, fault) => {
+    const { code, errors } = await holdfast('rehearse', ...args);
+    expect(code).toBe(2);
+    expect(errors.split('\n')[0]).toContain(fault);
+    expect(errors).toContain('usage: holdfast rehearse PLAN.json --out FOLDER');
+  });
 });

@@ -60,8 +60,8 @@ describe('holdfast check', () => {
   it.each([
     ['a file that is not there', ['nowhere.swc'], 'nowhere.swc'],
     ['a folder', [folder], 'is a folder: name a file'],
-    ['no file', [], 'usage'],
-    ['an option it does not know', ['a.swc', '--all'], 'usage'],
+    ['no file', [], 'No file is named.'],
+    ['an option it does not know', ['a.swc', '--all'], '"--all" is not understood.'],
   ])('ends with 2 for %s', (_, args, words) => {
     expect(check(args)).toBe(2);
     expect(errors).toContain(words);
