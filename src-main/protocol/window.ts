@@ -42,7 +42,7 @@ export function blockWithin(window: Window, sweep: BlocksByLane): LaidBlock | un
 }
 
 /** The block a window's edge hangs on, as it lies in this sweep. */
-export function blockOfEdge(window: Window, edge: 'from' | 'to', sweep: BlocksByLane): LaidBlock | undefined {
+function blockOfEdge(window: Window, edge: 'from' | 'to', sweep: BlocksByLane): LaidBlock | undefined {
   const lane = sweep.lanes.find((candidate) => candidate.pipette === window.lane);
   return lane?.blocks.find((laid) => laid.block.id === window[edge].block);
 }
