@@ -82,7 +82,7 @@ describe('holdfast rehearse', () => {
   it.runIf(process.platform !== 'win32')(
     'writes a finished rehearsal when it is interrupted over the numerical uncertainty',
     async () => {
-      const plan = planFile('long.plan.json', longPlan(10));
+      const plan = planFile('long.plan.json', longPlan(4));
       const child = spawn(process.execPath, [
         '--input-type=module',
         '-e',
