@@ -4,9 +4,9 @@ import { z } from 'zod';
 import { cellSchema, planSchema, siteSchema, type PlanDocument } from './documents.ts';
 import type {
   CellDrawing,
+  ListedRehearsal,
   PassiveEstimate,
   RehearsalOutcome,
-  RehearsalSummary,
   StoredRehearsal,
   SweepArrived,
   SwcReport,
@@ -39,6 +39,9 @@ export const questions = {
   'cell read': z.strictObject({ cellId: id }),
   'cell drawing': z.strictObject({ cell: cellSchema, sites: z.array(siteSchema).max(100).default([]) }),
   'cell remove': z.strictObject({ cellId: id, removed: z.boolean() }),
+
+  /** The published channels, their curves at this temperature. */
+  'channels stored': z.strictObject({ temperature_C: z.number().min(0).max(50) }),
 
   'plan create': z.strictObject({ plan: planSchema, cellId: id.optional() }),
   'plan open': z.strictObject({ planId: id }),
@@ -80,7 +83,8 @@ export const questions = {
   'estimate passive': z.strictObject({ plan: planSchema }),
 
   'export plan': z.strictObject({ plan: planSchema }),
-  'export traces': z.strictObject({ rehearsalId: id }),
+  /** One file per sweep; `asOne`: one for all, with the sweep in its first column. */
+  'export traces': z.strictObject({ rehearsalId: id, asOne: z.boolean().default(false) }),
   'export forecast': z.strictObject({ rehearsalId: id }),
   'export figure': z.strictObject({ rehearsalId: id }),
   'import plan': z.strictObject({ name: z.string().min(1).max(200), text: z.string().min(1) }),
@@ -147,7 +151,7 @@ export interface OpenedPlan {
   readonly cellId: number;
   readonly plan: PlanDocument;
   readonly savedAt: string;
-  readonly rehearsals: readonly RehearsalSummary[];
+  readonly rehearsals: readonly ListedRehearsal[];
 }
 /** What is wrong with a plan, and what it amounts to, before any run. */
 export interface PlanCheck {
@@ -158,6 +162,31 @@ export interface PlanCheck {
   readonly totalTime_s: number;
   readonly compartments: number;
   readonly step_us: number;
+}
+/** A published channel as a list of them shows it. */
+export interface ListedChannel {
+  readonly id: string;
+  readonly title: string;
+  readonly ion: string;
+  readonly reversal_mV: number;
+  /** At which its rates were measured or fitted; null where the source states none: they are then never scaled. */
+  readonly temperature_C: number | null;
+  readonly source: string;
+  /** The equations were not read in print. */
+  readonly fromMemory: boolean;
+  readonly note: string;
+  readonly gates: readonly ListedGate[];
+}
+export interface ListedGate {
+  readonly name: string;
+  readonly power: number;
+  /** 1: not scaled with temperature. */
+  readonly q10: number;
+  readonly voltages_mV: Float64Array;
+  /** Steady state, 0 to 1. */
+  readonly inf: Float64Array;
+  /** Time constant at the temperature asked for; 0 at every voltage for a gate that follows at once. */
+  readonly tau_ms: Float64Array;
 }
 export interface TextFile {
   readonly name: string;
@@ -178,6 +207,7 @@ export interface Answers {
   'cell read': { readonly cellId: number; readonly cell: z.infer<typeof cellSchema> };
   'cell drawing': CellDrawing;
   'cell remove': { readonly cellId: number };
+  'channels stored': readonly ListedChannel[];
   'plan create': OpenedPlan;
   'plan open': OpenedPlan;
   'plan keep draft': { readonly savedAt: string };
@@ -188,7 +218,7 @@ export interface Answers {
   'session write': { readonly savedAt: string };
   'session read': SessionEntry & { readonly notes: string };
   'rehearsal start': RehearsalOutcome;
-  'rehearsal list': readonly RehearsalSummary[];
+  'rehearsal list': readonly ListedRehearsal[];
   'rehearsal read': StoredRehearsal;
   'rehearsal traces': readonly Trace[];
   'rehearsal membrane': Trace;

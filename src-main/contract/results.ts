@@ -1,7 +1,7 @@
 // What comes back: drawings, traces, forecasts. Plain data; arrays are typed and travel as they are.
 // Names carry the unit. Arrays over compartments are in grid order: index k is compartment k.
 import type { RefusalData } from './refusal.ts';
-import type { PipetteLetter, ProtocolDocument, Site, Tolerance } from './documents.ts';
+import type { PipetteLetter, PlanDocument, ProtocolDocument, RigDocument, Site, Tolerance } from './documents.ts';
 
 // ---- the cell as drawn ----------------------------------------------------------------------------------------
 
@@ -153,6 +153,8 @@ export interface ClampSweep {
   readonly windowStart_ms: number;
   readonly windowEnd_ms: number;
   readonly reach: number;
+  /** The same by region, in this sweep. Absent in rehearsals stored by engines that did not give it. */
+  readonly reachByRegion?: readonly { readonly region: string; readonly reach: number }[];
   /** Signed, per compartment. Steady: at the window's end. Worst: the largest |error| in the window, with its sign. */
   readonly steady_mV: Float64Array;
   readonly worst_mV: Float64Array;
@@ -196,11 +198,22 @@ export interface PassiveEstimate {
   /** V(x)/V(clamp site) at DC per compartment under the clamp of A. */
   readonly control: Float64Array | null;
   readonly clampBandwidth_Hz: number | null;
+  /** At the clamp's site, in current clamp at the first pipette's; no clamp active. */
   readonly inputResistance_MOhm: number;
+  /** The same at each pipette's own site. */
+  readonly inputResistances_MOhm: Readonly<Partial<Record<PipetteLetter, number>>>;
 }
 
 export interface StoredRehearsal {
   readonly summary: RehearsalSummary;
   readonly forecast: Forecast;
+  readonly protocol: ProtocolDocument;
+  /** The whole plan as it was rehearsed, its protocol included. */
+  readonly plan: PlanDocument;
+}
+
+/** A rehearsal in a list: with the rig and the protocol it was run with, so that one can be told from another. */
+export interface ListedRehearsal extends RehearsalSummary {
+  readonly rig: RigDocument;
   readonly protocol: ProtocolDocument;
 }

@@ -15,6 +15,6 @@ export function refusalsOf(error: unknown): readonly RefusalData[] | null {
 }
 
 /** The forecast as a terminal shows it. */
-export function forecastWords(stored: StoredRehearsal): string {
+export function forecastWords(stored: Omit<StoredRehearsal, 'plan'>): string {
   return forecastText(stored);
 }

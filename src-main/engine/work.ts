@@ -52,7 +52,11 @@ export interface Works {
     answer: CellDrawing;
   };
   'trace tables': {
-    question: { readonly plan: { readonly name: string }; readonly traces: readonly Trace[] };
+    question: {
+      readonly plan: { readonly name: string };
+      readonly traces: readonly Trace[];
+      readonly asOne: boolean;
+    };
     part: never;
     answer: readonly TextFile[];
   };

@@ -10,7 +10,7 @@ export const forecastFormat = 1;
  * it comes from. Units stand in the field names; arrays over compartments are in grid order, those over sweeps in sweep
  * order. `null` in an array: no number there (not settled within the window, a reading that could not be taken).
  */
-export function forecastToJson(stored: StoredRehearsal): TextFile {
+export function forecastToJson(stored: Omit<StoredRehearsal, 'plan'>): TextFile {
   const { summary, forecast, protocol } = stored;
   const document = { kind: 'forecast', format: forecastFormat, summary, forecast, protocol };
   return { name: `${fileStem(summary.planName)}-forecast.json`, text: `${JSON.stringify(document, plainArrays, 2)}\n` };

@@ -15,7 +15,7 @@ const leastScale = 100;
  * or below 1e-4 of its unit, and a bias below a millionth of the true value; elsewhere an error below a millionth of a millivolt and a share below a
  * millionth. Where the true value itself is 0 there is no bias. Exports keep all digits.
  */
-export function forecastText({ summary, forecast }: StoredRehearsal): string {
+export function forecastText({ summary, forecast }: Omit<StoredRehearsal, 'plan'>): string {
   const { clamp } = forecast;
   const size = `${counted(summary.sweeps, 'sweep')}, ${counted(summary.compartments, 'compartment')}`;
   return [

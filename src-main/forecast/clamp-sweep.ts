@@ -7,7 +7,7 @@ import { blockWithin, resolveWindow, type TimeWindow } from '../protocol/window.
 import type { PlacedPipette, PreparedPlan } from '../solver/prepare.ts';
 import { fromSi, toSi, type Second, type Volt } from '../units/si.ts';
 import { clampMeter } from './clamp-error.ts';
-import { reachOf } from './reach.ts';
+import { reachByRegion, reachOf } from './reach.ts';
 
 export interface SweepClampMeter {
   readonly onSample: (index: number, V: Float64Array) => void;
@@ -76,6 +76,7 @@ export function sweepClampMeter(prepared: ClampPlan, sweep: LaidSweep): SweepCla
       windowStart_ms: fromSi(window.from, 'ms'),
       windowEnd_ms: fromSi(window.to, 'ms'),
       reach: reachOf(grid, steady, tolerance),
+      reachByRegion: reachByRegion(grid, steady, tolerance).map(({ region, reach }) => ({ region, reach })),
       steady_mV: steady.map((V) => fromSi(V, 'mV')),
       worst_mV: worst.map((V) => fromSi(V, 'mV')),
       settling_ms: settling.map((s) => fromSi(s, 'ms')),

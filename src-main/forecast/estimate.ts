@@ -54,7 +54,21 @@ function clampEstimate(prepared: PreparedPlan, site: number): PassiveEstimate {
     accessError_mV: judged === null ? null : fromSi(judged.accessError, 'mV'),
     control: controlFrom(steadyTree(grid, membrane.chord, others), site),
     clampBandwidth_Hz: clampBandwidth(clamps[0]?.access ?? 0, capacitance),
-    inputResistance_MOhm: fromSi(inputResistance(steadyTree(grid, membrane.chord), site), 'MOhm'),
+    ...inputResistances(prepared, membrane.chord, site),
+  };
+}
+
+/** At the site and at every pipette's own, no clamp active. */
+function inputResistances(
+  { grid, pipettes }: PreparedPlan,
+  chord: Parameters<typeof steadyTree>[1],
+  site: number,
+): Pick<PassiveEstimate, 'inputResistance_MOhm' | 'inputResistances_MOhm'> {
+  const tree = steadyTree(grid, chord);
+  const at = (compartment: number): number => fromSi(inputResistance(tree, compartment), 'MOhm');
+  return {
+    inputResistance_MOhm: at(site),
+    inputResistances_MOhm: Object.fromEntries(pipettes.map(({ letter, compartment }) => [letter, at(compartment)])),
   };
 }
 
@@ -123,13 +137,13 @@ function freeEstimate(prepared: PreparedPlan, memory: EstimateMemory): PassiveEs
   const known = memory.rest?.key === key ? memory.rest.V : undefined;
   const V = known ?? operatingPointOf(prepared).state.V;
   memory.rest = { key, V };
-  const tree = steadyTree(grid, steadyMembrane(grid, kinetics, temperature, V).chord);
+  const { chord } = steadyMembrane(grid, kinetics, temperature, V);
   return {
     reach: null,
     accessError_mV: null,
     control: null,
     clampBandwidth_Hz: null,
-    inputResistance_MOhm: fromSi(inputResistance(tree, site), 'MOhm'),
+    ...inputResistances(prepared, chord, site),
   };
 }
 

@@ -1,12 +1,14 @@
 import { decodeFrame, encodeFrame } from '../contract/frame.ts';
 import {
   planSchema,
+  protocolSchema,
+  rigSchema,
   type CellDocument,
   type PlanDocument,
   type ProtocolDocument,
   type RigDocument,
 } from '../contract/documents.ts';
-import type { Forecast, RehearsalSummary, Trace } from '../contract/results.ts';
+import type { Forecast, ListedRehearsal, RehearsalSummary, Trace } from '../contract/results.ts';
 import { change, type Notebook } from './open.ts';
 import { insertTraces } from './traces.ts';
 import { keepVersion } from './versions.ts';
@@ -78,20 +80,26 @@ interface SummaryRow extends Omit<RehearsalSummary, 'hashes'> {
   readonly protocolHash: string;
 }
 
-const summaryQuery = `
-  SELECT r.rehearsal_id AS rehearsalId, r.plan_id AS planId, p.name AS planName, r.session_id AS sessionId,
+const summaryColumns = ` r.rehearsal_id AS rehearsalId, r.plan_id AS planId, p.name AS planName, r.session_id AS sessionId,
     r.rehearsed_at AS rehearsedAt, r.engine_version AS engineVersion, r.sweeps, r.step_us, r.compartments, r.wall_s,
-    p.hash AS planHash, c.hash AS cellHash, g.hash AS rigHash, t.hash AS protocolHash
+    p.hash AS planHash, c.hash AS cellHash, g.hash AS rigHash, t.hash AS protocolHash`;
+const summarySource = `
   FROM rehearsal r
     JOIN version p ON p.version_id = r.plan_version JOIN version c ON c.version_id = r.cell_version
     JOIN version g ON g.version_id = r.rig_version JOIN version t ON t.version_id = r.protocol_version`;
 
-/** A plan's rehearsals, the newest first. */
-export function rehearsalsOfPlan(notebook: Notebook, planId: number): RehearsalSummary[] {
+/** A plan's rehearsals with what each was run with, the newest first. @throws Refusal `file-unreadable`. */
+export function rehearsalsOfPlan(notebook: Notebook, planId: number): ListedRehearsal[] {
   return notebook.db
-    .prepare<[number], SummaryRow>(`${summaryQuery} WHERE r.plan_id = ? ORDER BY r.rehearsal_id DESC`)
+    .prepare<[number], SummaryRow & { readonly rig: string; readonly protocol: string }>(
+      `SELECT ${summaryColumns}, g.document AS rig, t.document AS protocol ${summarySource} WHERE r.plan_id = ? ORDER BY r.rehearsal_id DESC`,
+    )
     .all(planId)
-    .map(summaryOf);
+    .map(({ rig, protocol, ...row }) => ({
+      ...summaryOf(row),
+      rig: readBack(rigSchema, rig, `rehearsal ${row.rehearsalId}`),
+      protocol: readBack(protocolSchema, protocol, `rehearsal ${row.rehearsalId}`),
+    }));
 }
 
 /** The forecast as stored, with the numerical uncertainty that came since. @throws Refusal `notebook-record-missing`. */
@@ -99,7 +107,9 @@ export function readRehearsal(
   notebook: Notebook,
   rehearsalId: number,
 ): { readonly summary: RehearsalSummary; readonly forecast: Forecast; readonly plan: PlanDocument } {
-  const row = notebook.db.prepare<[number], SummaryRow>(`${summaryQuery} WHERE r.rehearsal_id = ?`).get(rehearsalId);
+  const row = notebook.db
+    .prepare<[number], SummaryRow>(`SELECT ${summaryColumns} ${summarySource} WHERE r.rehearsal_id = ?`)
+    .get(rehearsalId);
   const kept = notebook.db
     .prepare<
       [number],

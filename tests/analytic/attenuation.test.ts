@@ -45,7 +45,11 @@ describe('attenuation between soma and tip', () => {
         1,
         9,
       );
-      expect(passiveEstimate(plan).inputResistance_MOhm).toBeCloseTo(figures!.inputResistanceA_MOhm, 9);
+      const { inputResistance_MOhm, inputResistances_MOhm } = passiveEstimate(plan);
+      expect(inputResistance_MOhm).toBeCloseTo(figures!.inputResistanceA_MOhm, 9);
+      // Each pipette's own site, not the clamp's.
+      expect(inputResistances_MOhm.A).toBeCloseTo(figures!.inputResistanceA_MOhm, 9);
+      expect(inputResistances_MOhm.B).toBeCloseTo(figures!.inputResistanceB_MOhm, 9);
     },
   );
 

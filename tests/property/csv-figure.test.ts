@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { ProtocolDocument } from '../../src-main/contract/documents.ts';
 import type { StoredRehearsal, Trace } from '../../src-main/contract/results.ts';
-import { tracesToCsv } from '../../src-main/exchange/csv.ts';
+import { tracesToCsv, tracesToOneCsv } from '../../src-main/exchange/csv.ts';
 import { axisOver } from '../../src-main/exchange/figure-axis.ts';
 import { curvePath, type Frame } from '../../src-main/exchange/figure-curve.ts';
 import { figureSvg } from '../../src-main/exchange/figure-svg.ts';
@@ -16,7 +16,7 @@ function trace(sweep: number, key: string, unit: Trace['unit'], values: readonly
 const protocol: ProtocolDocument = clampProtocol([hold('b', 1), step('t', 2, 0)], {
   ladders: [{ lane: 'A', block: 't', number: 'level', rungs: { start: -80, increment: 40, count: 3 } }],
 });
-const stored = (name = 'Na & K <test>'): StoredRehearsal => ({
+const stored = (name = 'Na & K <test>'): Omit<StoredRehearsal, 'plan'> => ({
   summary: {
     rehearsalId: 1,
     planId: 2,
@@ -74,6 +74,22 @@ describe('traces as CSV', () => {
     const long = { ...trace(3, 'recording:A', 'pA', []), values: new Float64Array(13_000_000) };
     expect(refusalsOf(() => tracesToCsv({ name: 'long' }, [long]))).toEqual([
       expect.objectContaining({ code: 'too-large', place: 'sweep 4', value: expect.stringContaining('13000000 rows') }),
+    ]);
+  });
+
+  it('all sweeps in one file: sweeps from 1, one below the other, empty where a sweep has no such trace', () => {
+    const [file, ...more] = tracesToOneCsv({ name: 'x' }, traces);
+    expect(more).toEqual([]);
+    expect(file!.name).toBe('x-traces.csv');
+    expect(file!.text.split('\r\n')).toEqual([
+      'sweep,time_ms,recording:A (pA),"membrane:tip, ""far"" (mV)"',
+      '1,0,3,',
+      '1,0.02,4,',
+      '1,0.04,5,',
+      '2,0,1,-70',
+      '2,0.02,2.5,-69.12345679',
+      '2,0.04,,0',
+      '',
     ]);
   });
 

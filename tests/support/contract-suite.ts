@@ -1,7 +1,7 @@
 // What every shell promises of the engine behind it. Each shell's test opens the engine its own way and runs these.
 import { copyFileSync, existsSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import type { PlanDocument } from '../../src-main/contract/documents.ts';
+import { planSchema, type PlanDocument } from '../../src-main/contract/documents.ts';
 import type { Answer, Answers, EngineEvent, Question, RequestName } from '../../src-main/contract/requests.ts';
 import { testFolder } from './folder.ts';
 import { longPlan, smallPlan } from './small-plans.ts';
@@ -83,11 +83,17 @@ export function contractSuite(shell: string, open: Open, dyingWorker?: string): 
         expect(progress[0]).toBe(0);
         expect(progress).toEqual(progress.toSorted((a, b) => a - b));
 
-        const { forecast, summary } = value(await engine.ask('rehearsal read', { rehearsalId }));
+        const { forecast, summary, plan } = value(await engine.ask('rehearsal read', { rehearsalId }));
         expect(summary).toMatchObject({ planName: 'Three steps', sweeps: 3, compartments: 3 });
+        expect(plan).toEqual(planSchema.parse(smallPlan()));
+        const [listed] = value(await engine.ask('rehearsal list', { planId: summary.planId }));
+        expect(listed).toEqual({ ...summary, rig: plan.rig, protocol: plan.protocol });
+        expect(value(await engine.ask('export traces', { rehearsalId, asOne: true }))).toHaveLength(1);
         expect(summary.hashes.plan).toMatch(/^[0-9a-f]{64}$/);
         expect(forecast.clamp?.sweeps[0]?.steady_mV).toBeInstanceOf(Float64Array);
         expect(forecast.clamp?.sweeps[0]?.steady_mV).toHaveLength(3);
+        const ofWorst = forecast.clamp?.sweeps.find(({ sweep }) => sweep === forecast.clamp?.worstSweep)?.reachByRegion;
+        expect(ofWorst).toEqual(forecast.clamp?.reachByRegion.map(({ region, reach }) => ({ region, reach })));
         expect(forecast.readings[0]?.recorded).toBeInstanceOf(Float64Array);
         const traces = value(await engine.ask('rehearsal traces', { rehearsalId, sweeps: [2] }));
         expect(traces.map((trace) => trace.key)).toEqual(

@@ -15,10 +15,10 @@ export const exchangeHandlers = {
     name: `${fileStem(plan.name)}.plan.json`,
     text: `${JSON.stringify(plan, null, 2)}\n`,
   }),
-  'export traces': ({ rehearsalId }, desk) => {
+  'export traces': ({ rehearsalId, asOne }, desk) => {
     const { summary } = storedRehearsal(desk.notebook, rehearsalId);
     const traces = readTraces(desk.notebook, rehearsalId);
-    return desk.pool.run('short', 'trace tables', { plan: { name: summary.planName }, traces });
+    return desk.pool.run('short', 'trace tables', { plan: { name: summary.planName }, traces, asOne });
   },
   'export forecast': ({ rehearsalId }, desk) => forecastToJson(storedRehearsal(desk.notebook, rehearsalId)),
   'export figure': ({ rehearsalId }, desk) => {
