@@ -136,6 +136,7 @@ export const makeUpSchema = z.strictObject({
         reversal_mV: finite.optional(),
       }),
     )
+    .max(100)
     .default([]),
 });
 export type MakeUpDocument = z.infer<typeof makeUpSchema>;
@@ -159,13 +160,13 @@ const cellCommon = {
   note: z.string().max(20000).default(''),
   surroundings: surroundingsSchema,
   /** Channels of this cell's own, by rate description. */
-  channels: z.array(channelSchema).default([]),
+  channels: z.array(channelSchema).max(100).default([]),
 };
 export const shapedCellSchema = z.strictObject({
   ...cellCommon,
   shape: shapeSourceSchema,
-  regions: z.array(regionSchema).min(1),
-  makeUp: z.array(makeUpSchema).min(1),
+  regions: z.array(regionSchema).min(1).max(500),
+  makeUp: z.array(makeUpSchema).min(1).max(500),
 });
 export const sketchedCellSchema = z.strictObject({
   ...cellCommon,

@@ -170,6 +170,14 @@ describe('a protocol that is too large', () => {
   });
 });
 
+it('a cell of 10⁵ channels of its own is refused', () => {
+  const channels = Array.from({ length: 100_000 }, (_, n) => ({ name: `c-${n}`, reversal_mV: 0, gates: [] }));
+  const asked = { ...plan, cell: { ...plan.cell, channels } };
+  expect(refusalsOf(() => checkedQuestion('plan check', { plan: asked }))).toEqual([
+    expect.objectContaining({ code: 'too-large', place: 'cell.channels', remedy: 'give at most 100 of them' }),
+  ]);
+});
+
 it('tells each of 200 000 faults', () => {
   if (!('compartments' in plan.cell)) throw new Error('the small plan is a sketch');
   const couplings = Array.from({ length: 200_000 }, (_, n): [string, string, number] => ['soma', `nowhere ${n}`, 1]);
