@@ -60,7 +60,7 @@ export function createEngine(options: EngineOptions = {}): Engine {
     } catch (error) {
       if (error instanceof Refusal) return { ok: false, refusals: listOf(error) };
       if (error instanceof WorkerDeath) return { ok: false, refusals: [deathRefusal(error)] };
-      log(stackOf(error, call.name));
+      log(stackOf(error, (call as Call | null | undefined)?.name));
       return { ok: false, fault: error instanceof Error ? error.message : String(error) };
     }
   };
@@ -106,6 +106,6 @@ function listOf(error: Refusal): readonly [RefusalData, ...RefusalData[]] {
   return [first ?? error.data, ...others];
 }
 
-function stackOf(error: unknown, name: string): string {
-  return `fault while answering "${name}": ${inspect(error)}`;
+function stackOf(error: unknown, name: unknown): string {
+  return `fault while answering "${String(name)}": ${inspect(error)}`;
 }

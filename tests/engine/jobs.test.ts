@@ -156,6 +156,14 @@ describe('a rehearsal that is running while the notebook is changed', () => {
   });
 });
 
+it.each([[null], [undefined], [{}], [{ call: 1, name: 3, question: null }]])(
+  'answers what is no call at all: %j',
+  async (call) => {
+    engine = createEngine({ workers: 1, log: () => undefined });
+    expect((await engine.handle(call as never)).ok).toBe(false);
+  },
+);
+
 describe('what saves itself', () => {
   it('is not written into another notebook that was opened meanwhile', async () => {
     const own = await inNotebook();
