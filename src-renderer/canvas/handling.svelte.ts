@@ -1,5 +1,6 @@
 // What pointer, wheel and keys do on the cell: pan, zoom, turn, select, drag pipettes.
 import type { PipetteLetter, Site } from '../../src-main/contract/documents.ts';
+import type { CellDrawing } from '../../src-main/contract/results.ts';
 import { camera } from '../state/camera.svelte.ts';
 import { drawing } from '../state/drawing.svelte.ts';
 import { pipetteOf, withSite } from '../state/edits/pipette.ts';
@@ -7,7 +8,7 @@ import { hover } from '../state/hover.svelte.ts';
 import { plan } from '../state/plan.svelte.ts';
 import { removeProbe } from '../state/probes.ts';
 import { selection } from '../state/selection.svelte.ts';
-import { compartmentAt, movedSite, siteWords } from '../text/places.ts';
+import { compartmentAt, isWithin, movedSite, siteWords } from '../text/places.ts';
 import { pan, turn, zoomAt, type Camera } from './camera.ts';
 import { pick, type Picked } from './pick.ts';
 import { pickPipette } from './pipette-place.ts';
@@ -37,6 +38,8 @@ const reach_px = 10;
 export class Handling {
   readonly #scene: Scene;
   #drag = $state.raw<Drag | null>(null);
+  /** The branch that arrow keys came in from: back outward they take the same way. */
+  #cameFrom: number | null = null;
   readonly isDragging = $derived(this.#drag?.hasMoved ?? false);
 
   constructor(scene: Scene) {
@@ -146,15 +149,22 @@ export class Handling {
     const by = outward * (event.shiftKey ? 10 : 1);
     if (thing.kind === 'pipette') {
       const site = pipetteOf(plan.document, thing.letter)?.site;
-      if (site !== undefined) movePipette(thing.letter, movedSite(shown, site, by), `keys ${thing.letter}`);
+      if (site !== undefined) movePipette(thing.letter, this.#moved(shown, site, by), `keys ${thing.letter}`);
       return true;
     }
     if (thing.kind === 'compartment') {
-      const site = movedSite(shown, thing.site, by);
+      const site = this.#moved(shown, thing.site, by);
       selection.select({ kind: 'compartment', site, compartment: compartmentAt(shown, site) });
       return true;
     }
     return false;
+  }
+
+  #moved(shown: CellDrawing, site: Site, by_um: number): Site {
+    if ('branch' in site && (this.#cameFrom === null || !isWithin(shown, this.#cameFrom, site.branch))) {
+      this.#cameFrom = site.branch;
+    }
+    return movedSite(shown, site, by_um, this.#cameFrom);
   }
 
   #look(event: KeyboardEvent): boolean {

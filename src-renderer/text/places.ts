@@ -78,9 +78,10 @@ export function compartmentAt(drawing: CellDrawing, site: Site): number {
 
 /**
  * A site moved along the cell by micrometres: outward when positive. Past a branch's start it goes on at the parent's
- * end, past its end in the thickest child.
+ * end; past its end in the child that leads to the branch `toward`, else in the thickest. Moving back by as much comes
+ * back to the very place, unless the cell ended on the way.
  */
-export function movedSite(drawing: CellDrawing, site: Site, by_um: number): Site {
+export function movedSite(drawing: CellDrawing, site: Site, by_um: number, toward: number | null = null): Site {
   if ('compartment' in site) return site;
   const branch = drawing.branches.find((b) => b.branch === site.branch);
   if (branch === undefined) return site;
@@ -89,18 +90,35 @@ export function movedSite(drawing: CellDrawing, site: Site, by_um: number): Site
   if (to < 0) {
     const parent = drawing.branches.find((b) => b.branch === branch.parent);
     if (parent === undefined) return { branch: branch.branch, at_um: 0 };
-    return { branch: parent.branch, at_um: round(Math.max(0, branchLength(parent) + to)) };
+    return movedSite(drawing, { branch: parent.branch, at_um: branchLength(parent) }, to, toward);
   }
   if (to > length) {
-    const children = drawing.branches.filter((b) => b.parent === branch.branch);
-    const thickest = children.reduce<DrawnBranch | null>(
+    const child = childToward(drawing, branch, toward);
+    if (child === null) return { branch: branch.branch, at_um: round(length) };
+    return movedSite(drawing, { branch: child.branch, at_um: 0 }, to - length, toward);
+  }
+  // Sums such as 2.3 − 1 carry binary noise: a tenth of a nanometre takes it off.
+  return { branch: branch.branch, at_um: Math.min(length, Number(to.toFixed(4))) };
+}
+
+function childToward(drawing: CellDrawing, branch: DrawnBranch, toward: number | null): DrawnBranch | null {
+  const children = drawing.branches.filter((b) => b.parent === branch.branch);
+  const leading = children.find((b) => toward !== null && isWithin(drawing, toward, b.branch));
+  return (
+    leading ??
+    children.reduce<DrawnBranch | null>(
       (best, b) => (best === null || (b.radius_um[0] ?? 0) > (best.radius_um[0] ?? 0) ? b : best),
       null,
-    );
-    if (thickest === null) return { branch: branch.branch, at_um: round(length) };
-    return { branch: thickest.branch, at_um: round(Math.min(branchLength(thickest), to - length)) };
+    )
+  );
+}
+
+/** Whether a branch is another or grows from it, at whatever remove. */
+export function isWithin(drawing: CellDrawing, branch: number, of: number): boolean {
+  for (let at = branch; at >= 0; at = drawing.branches.find((b) => b.branch === at)?.parent ?? -1) {
+    if (at === of) return true;
   }
-  return { branch: branch.branch, at_um: round(to) };
+  return false;
 }
 
 /** A probe name no other probe has: the place, with a number when the place is taken. */

@@ -1,6 +1,7 @@
 // The cell on the picture: what is drawn can be picked, and looking does not move the cell.
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import type { Site } from '../../src-main/contract/documents.ts';
 import type { CellDrawing, DrawnBranch } from '../../src-main/contract/results.ts';
 import {
   fit,
@@ -197,6 +198,24 @@ describe('places in words', () => {
         expect(movedSite(drawing, there, -by)).toEqual({ branch: 1, at_um });
       }),
     );
+  });
+
+  it('steps of +1, +10, −1, −10 µm end where they began, at any place and across the branch point', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 1, max: 99, noNaN: true }), (at) => {
+        const site = { branch: 1, at_um: Number(at.toFixed(2)) };
+        const path = [1, 10, -1, -10].reduce<Site>((s, by) => movedSite(drawing, s, by), site);
+        expect(path).toEqual(site);
+      }),
+    );
+  });
+
+  it('goes back out into the branch it came in from, thick or thin', () => {
+    const thin = { branch: 3, at_um: 4 };
+    const inward = movedSite(drawing, thin, -10);
+    expect(inward).toEqual({ branch: 1, at_um: 94 });
+    expect(movedSite(drawing, inward, 10, 3)).toEqual(thin);
+    expect(movedSite(drawing, inward, 10)).toMatchObject({ branch: 2 });
   });
 
   it('crosses a branch point into the thickest child, and back into the parent', () => {
