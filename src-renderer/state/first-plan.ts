@@ -22,9 +22,19 @@ export function onCell(document: PlanDocument, cell: CellDocument): PlanDocument
   };
 }
 
+/** Whether any membrane of the cell has gates; without them a step's early peak is its charging. */
+function hasChannels(cell: CellDocument): boolean {
+  const used =
+    'compartments' in cell
+      ? cell.compartments.flatMap((c) => Object.keys(c.channels))
+      : cell.makeUp.flatMap((m) => m.channels.map((c) => c.channel));
+  const leaks = new Set(cell.channels.filter((c) => c.gates.length === 0).map((c) => c.name));
+  return used.some((name) => !leaks.has(name));
+}
+
 /**
- * Where a new plan starts: one pipette at the soma, 12 MΩ, a family of steps from −100 to +40 mV, the peak asked for.
- * Values: common practice for whole-cell recording.
+ * Where a new plan starts: one pipette at the soma, 12 MΩ, a family of steps from −100 to +40 mV, the peak asked for;
+ * of a passive cell the steady current, late in the step. Values: common practice for whole-cell recording.
  */
 export function firstPlan(cell: CellDocument): PlanDocument {
   const edge = (block: string, side: 'start' | 'end'): { block: string; edge: 'start' | 'end'; offset_ms: number } => ({
@@ -37,7 +47,7 @@ export function firstPlan(cell: CellDocument): PlanDocument {
     format: 1,
     name: `Steps on ${cell.name}`.slice(0, 200),
     note: '',
-    question: { reading: 'peak', bias_percent: 5 },
+    question: { reading: hasChannels(cell) ? 'peak' : 'steady', bias_percent: 5 },
     tolerance: { unit: 'mV', value: 5 },
     probes: [],
     cell,

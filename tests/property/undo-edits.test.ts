@@ -35,24 +35,50 @@ describe('changes of the rig', () => {
     expect(left.protocol).toEqual(start.protocol);
   });
 
-  it('switching A to current clamp gives pA that make the same steps through the input resistance', () => {
-    const plan = withMode(start, 'A', 'current clamp', 100);
-    isWhole(plan);
-    // Holding −70 mV becomes 0 pA; a rung of 10 mV through 100 MΩ is 100 pA; −100 mV is 30 mV below holding.
-    expect(plan.protocol.lanes[0]).toMatchObject({ unit: 'pA', holding: 0 });
-    expect(plan.protocol.ladders[0]?.rungs).toEqual({ start: -300, increment: 100, count: 15 });
+  it('switching A to current clamp gives small steps to both sides of 0 pA, by the input resistance', () => {
+    // 5 mV through 100 MΩ is 50 pA; through 300 MΩ 16.7 pA, nearest to 20; through 40 MΩ 125 pA, nearest to 100.
+    for (const [resistance, increment] of [
+      [100, 50],
+      [300, 20],
+      [40, 100],
+    ] as const) {
+      const plan = withMode(start, 'A', 'current clamp', resistance);
+      isWhole(plan);
+      expect(plan.protocol.lanes[0]).toMatchObject({ unit: 'pA', holding: 0 });
+      expect(plan.protocol.ladders[0]?.rungs).toEqual({ start: -2 * increment, increment, count: 5 });
+    }
   });
 
-  it('there and back leads to the same levels when the resistance is round', () => {
+  it('switching A to current clamp balances the bridge to the access resistance; back, there is none', () => {
+    const plan = withMode(start, 'A', 'current clamp', 100);
+    expect(plan.rig.pipettes[0]).toMatchObject({ accessResistance_MOhm: 12, bridge_MOhm: 12 });
+    expect(withMode(plan, 'A', 'voltage clamp', 100).rig.pipettes[0]?.bridge_MOhm).toBe(0);
+  });
+
+  it('switching the mode renames readings that say current or voltage, and only those', () => {
+    const named = (plan: PlanDocument): string[] => plan.protocol.readings.map((r) => r.name);
+    const other = { ...start.protocol.readings[0]!, id: 'own', name: 'Currently best' };
+    const plan = { ...start, protocol: { ...start.protocol, readings: [...start.protocol.readings, other] } };
+    const there = withMode(plan, 'A', 'current clamp', 100);
+    expect(named(there)).toEqual(['Peak voltage', 'Steady voltage', 'Currently best']);
+    expect(named(withMode(there, 'A', 'voltage clamp', 100))).toEqual(named(plan));
+  });
+
+  it('back in voltage clamp the steps are those the currents would make', () => {
     const back = withMode(withMode(start, 'A', 'current clamp', 100), 'A', 'voltage clamp', 100);
-    expect(back.protocol).toEqual(start.protocol);
+    // −100 pA through 100 MΩ is 10 mV below −70 mV.
+    expect(back.protocol.ladders[0]?.rungs).toEqual({ start: -80, increment: 5, count: 5 });
+    expect(back.protocol.lanes[0]).toMatchObject({ unit: 'mV', holding: -70 });
   });
 
   it('never makes a ladder whose rungs are all the same', () => {
     fc.assert(
       fc.property(fc.double({ min: 1, max: 1e5, noNaN: true }), (resistance) => {
-        const rungs = withMode(start, 'A', 'current clamp', resistance).protocol.ladders[0]?.rungs;
-        expect(rungs !== undefined && 'increment' in rungs ? rungs.increment : 0).not.toBe(0);
+        const there = withMode(start, 'A', 'current clamp', resistance);
+        for (const plan of [there, withMode(there, 'A', 'voltage clamp', resistance / 100)]) {
+          const rungs = plan.protocol.ladders[0]?.rungs;
+          expect(rungs !== undefined && 'increment' in rungs ? rungs.increment : 0).not.toBe(0);
+        }
       }),
     );
   });
@@ -73,8 +99,23 @@ describe('changes of the ladder', () => {
     expect(mainLadder(withLastRung(start, -120))).toMatchObject({ first: -100, last: -120, count: 3, increment: -10 });
   });
 
+  it('turn round when the first rung goes past the last', () => {
+    expect(mainLadder(withFirstRung(start, 100))).toMatchObject({ first: 100, last: 40, count: 7, increment: -10 });
+  });
+
   it('count sweeps', () => {
     expect(mainLadder(withRungCount(start, 3))).toMatchObject({ first: -100, last: -80, count: 3 });
+  });
+});
+
+describe('a new plan', () => {
+  it('asks for the late steady current of a passive cell, and for the peak once there are gates', () => {
+    expect(start.question?.reading).toBe('steady');
+    const gated = withMakeUp(start, 'soma', (m) => ({
+      ...m,
+      channels: [{ channel: 'na-hodgkin-huxley-1952', density: { rule: 'uniform', mS_cm2: 120 } }] as never,
+    })).cell;
+    expect(firstPlan(gated).question?.reading).toBe('peak');
   });
 });
 

@@ -35,18 +35,19 @@ export function mainLadder(plan: PlanDocument): MainLadder | null {
   return { ladder, index: 0, first: rungs.start, last, increment: rungs.increment, count: rungs.count, unit };
 }
 
-/** Moves the first rung; the last stays as near as whole rungs allow. */
+/** Moves the first rung; the last stays as near as whole rungs allow, and past it the direction turns round. */
 export function withFirstRung(plan: PlanDocument, first: number): PlanDocument {
   const main = mainLadder(plan);
   if (main?.increment == null) return plan;
-  return withRungs(plan, first, main.increment, rungsBetween(first, main.last, main.increment));
+  const increment = towards(main.last - first, main.increment);
+  return withRungs(plan, first, increment, rungsBetween(first, main.last, increment));
 }
 
 /** Moves the last rung by changing how many there are; a first rung on its far side turns the direction round. */
 export function withLastRung(plan: PlanDocument, last: number): PlanDocument {
   const main = mainLadder(plan);
   if (main?.increment == null) return plan;
-  const increment = Math.sign(last - main.first) * Math.abs(main.increment) || main.increment;
+  const increment = towards(last - main.first, main.increment);
   return withRungs(plan, main.first, increment, rungsBetween(main.first, last, increment));
 }
 
@@ -56,13 +57,20 @@ export function withRungCount(plan: PlanDocument, count: number): PlanDocument {
   return main?.increment == null ? plan : withRungs(plan, main.first, main.increment, count);
 }
 
+/** The increment turned to go the way of the span. */
+function towards(span: number, increment: number): number {
+  return Math.sign(span) * Math.abs(increment) || increment;
+}
+
 function rungsBetween(first: number, last: number, increment: number): number {
   if (increment === 0) return 1;
   return Math.max(1, Math.min(10_000, Math.floor((last - first) / increment + 1e-9) + 1));
 }
 
 function withRungs(plan: PlanDocument, start: number, increment: number, count: number): PlanDocument {
-  const ladders = plan.protocol.ladders.map((l, i) => (i === 0 ? { ...l, rungs: { start, increment, count } } : l));
+  const ladders = plan.protocol.ladders.map((l, i) =>
+    i === 0 ? { ...l, rungs: { ...l.rungs, start, increment, count } } : l,
+  );
   return { ...plan, protocol: { ...plan.protocol, ladders } };
 }
 

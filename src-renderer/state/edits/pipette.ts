@@ -34,7 +34,9 @@ const usualHolding_mV = -70;
 /**
  * Switches a pipette's mode and turns its lane's levels into the other unit through the input resistance
  * (ΔV = I·R): a voltage step becomes the current that would make it at rest, and back. Rounded to 1 mV and 10 pA;
- * a starting point to edit, not an equivalence.
+ * a starting point to edit, not an equivalence. A ladder of levels becomes small steps to both sides of 0 pA, for the
+ * currents of a voltage-clamp family would drive the cell far out of its range. The bridge is balanced to the access
+ * resistance, and readings that say current say voltage, and back.
  *
  * @param inputResistance_MOhm of the cell; 100 where it is not known.
  */
@@ -47,7 +49,8 @@ export function withMode(
   const pipette = pipetteOf(plan, letter);
   if (pipette === null || pipette.mode === mode) return plan;
   const lane = plan.protocol.lanes.find((l) => l.pipette === letter);
-  const moved = withPipette(plan, letter, { mode, ...(mode === 'voltage clamp' ? { bridge_MOhm: 0 } : {}) });
+  const bridge_MOhm = mode === 'voltage clamp' ? 0 : pipette.accessResistance_MOhm;
+  const moved = withPipette(plan, letter, { mode, bridge_MOhm });
   const unit = mode === 'voltage clamp' ? 'mV' : 'pA';
   if (lane === undefined || lane.unit === unit) return moved;
   const turn = turning(lane, inputResistance_MOhm ?? 100);
@@ -55,11 +58,37 @@ export function withMode(
     ...plan.protocol,
     lanes: plan.protocol.lanes.map((l) => (l.pipette === letter ? turnedLane(l, unit, turn) : l)),
     ladders: plan.protocol.ladders.map((l) => (l.lane === letter ? turnedLadder(l, turn) : l)),
+    readings: plan.protocol.readings.map((r) => (r.pipette === letter ? { ...r, name: renamed(r.name, mode) } : r)),
   };
   return { ...moved, protocol };
 }
 
+/** "Peak current" to "Peak voltage", and back; another name stays. */
+function renamed(name: string, mode: Mode): string {
+  const [from, to] = mode === 'current clamp' ? (['current', 'voltage'] as const) : (['voltage', 'current'] as const);
+  const other = (found: string): string => (found.startsWith(from.charAt(0)) ? to : to.replace(/^./, upper));
+  return name.replaceAll(new RegExp(`\\b${from}\\b`, 'gi'), other);
+}
+const upper = (letter: string): string => letter.toUpperCase();
+
+/** Steps of some 5 mV at rest, two to each side of none: five sweeps that keep a cell near its rest. Common practice. */
+function currentLadder(resistance_MOhm: number): Rungs {
+  const increment = round125((5 / resistance_MOhm) * 1000);
+  return { start: -2 * increment, increment, count: 5 };
+}
+
+/** The nearest of 1, 2, 5 times a power of ten, by ratio. */
+function round125(value: number): number {
+  const decade = 10 ** Math.floor(Math.log10(value));
+  const steps = [1, 2, 5, 10].map((m) => Number((m * decade).toPrecision(6)));
+  return steps.reduce((best, s) => (Math.abs(Math.log(s / value)) < Math.abs(Math.log(best / value)) ? s : best));
+}
+
+type Rungs = Ladder['rungs'];
+
 interface Turning {
+  /** Rungs for a ladder of levels, where turning each of them would not do. */
+  readonly rungs: Rungs | null;
   readonly level: (value: number) => number;
   readonly difference: (value: number) => number;
   readonly holding: number;
@@ -69,10 +98,12 @@ function turning(lane: Lane, resistance_MOhm: number): Turning {
   // mV / MΩ = nA = 1000 pA.
   if (lane.unit === 'mV') {
     const difference = (mV: number): number => 10 * Math.round(((mV / resistance_MOhm) * 1000) / 10) + 0;
-    return { level: (mV) => difference(mV - lane.holding), difference, holding: 0 };
+    const rungs = currentLadder(resistance_MOhm);
+    return { rungs, level: (mV) => difference(mV - lane.holding), difference, holding: 0 };
   }
   const difference = (pA: number): number => Math.round((pA * resistance_MOhm) / 1000) + 0;
-  return { level: (pA) => usualHolding_mV + difference(pA - lane.holding), difference, holding: usualHolding_mV };
+  const level = (pA: number): number => usualHolding_mV + difference(pA - lane.holding);
+  return { rungs: null, level, difference, holding: usualHolding_mV };
 }
 
 function turnedLane(lane: Lane, unit: Lane['unit'], turn: Turning): Lane {
@@ -96,10 +127,11 @@ function turnedBlock(block: Block, turn: Turning): Block {
 
 function turnedLadder(ladder: Ladder, turn: Turning): Ladder {
   if (!['level', 'base', 'from', 'to'].includes(ladder.number)) return ladder;
+  if (turn.rungs !== null) return { ...ladder, rungs: turn.rungs };
   if ('list' in ladder.rungs) return { ...ladder, rungs: { list: ladder.rungs.list.map(turn.level) } };
   const { start, increment, count } = ladder.rungs;
   // A rung that rounds to nothing would make every sweep the same.
-  const smallest = Math.sign(increment) * (turn.holding === 0 ? 10 : 1);
+  const smallest = Math.sign(increment);
   return { ...ladder, rungs: { start: turn.level(start), increment: turn.difference(increment) || smallest, count } };
 }
 
