@@ -2,6 +2,14 @@
 
 export const otherKeys = [
   {
+    title: 'In the plan line',
+    keys: [
+      { key: 'Enter', words: 'Change the fragment; a digit begins a new value' },
+      { key: 'Space', words: 'Rehearse' },
+      { key: 'Esc', words: 'Back to what was there; again, leave the line' },
+    ],
+  },
+  {
     title: 'In a number',
     keys: [
       { key: '↑ ↓', words: 'Step' },

@@ -15,6 +15,8 @@ interface Owned {
   readonly area: Area;
   /** What it is, for readers. */
   readonly label: string;
+  /** Punctuation that must not be parted from it at a line's end. */
+  readonly tail?: string;
 }
 export interface NumberFragment extends Owned {
   readonly kind: 'number';
@@ -26,7 +28,9 @@ export interface NumberFragment extends Owned {
   readonly least: number;
   readonly most: number;
   readonly isWhole: boolean;
-  readonly undoWords: ChangeWords;
+  /** What undo will say, of what was typed and what became of it. */
+  readonly undoWords: (typed: number) => ChangeWords;
+  /** Of the plan as it stood when the edit began, not of what a half-typed number made of it. */
   readonly change: (plan: PlanDocument, value: number) => PlanDocument;
 }
 export interface ChoiceFragment extends Owned {
@@ -67,7 +71,7 @@ const say = (words: string): Fragment => ({ kind: 'words', words });
 
 /** The sentence, in reading order. */
 export function planSentence(plan: PlanDocument, drawing: CellDrawing | null): readonly Fragment[] {
-  return [
+  return glued([
     say('On '),
     { kind: 'cell', key: 'cell', area: 'Cell', label: 'Cell', words: plan.cell.name },
     say(', '),
@@ -91,6 +95,15 @@ export function planSentence(plan: PlanDocument, drawing: CellDrawing | null): r
       }),
     }),
     ...questionPart(plan),
+    ...tolerancePart(plan),
+    say('.'),
+  ]);
+}
+
+/** Where nothing holds the voltage there is no clamp error to tolerate. */
+function tolerancePart(plan: PlanDocument): readonly Fragment[] {
+  if (!plan.rig.pipettes.some((p) => p.mode === 'voltage clamp')) return [];
+  return [
     say(', held within '),
     number({
       key: 'tolerance',
@@ -104,8 +117,28 @@ export function planSentence(plan: PlanDocument, drawing: CellDrawing | null): r
       read: (p) => p.tolerance.value,
       change: (p, value) => ({ ...p, tolerance: { ...p.tolerance, value } }),
     }),
-    say('.'),
   ];
+}
+
+/** Gives the stop or comma after a fragment to the fragment, so that no line begins with one. */
+function glued(fragments: readonly Fragment[]): readonly Fragment[] {
+  const whole: Fragment[] = [];
+  for (const fragment of fragments) {
+    const before = whole.at(-1);
+    if (fragment.kind === 'words' && before?.kind === 'words') {
+      whole[whole.length - 1] = say(before.words + fragment.words);
+      continue;
+    }
+    const mark = fragment.kind === 'words' ? (/^[.,…]/.exec(fragment.words)?.[0] ?? '') : '';
+    if (fragment.kind !== 'words' || mark === '' || before === undefined || !('key' in before)) {
+      whole.push(fragment);
+      continue;
+    }
+    whole[whole.length - 1] = { ...before, tail: mark };
+    const rest = fragment.words.slice(mark.length);
+    if (rest !== '') whole.push(say(rest));
+  }
+  return whole;
 }
 
 function pipettePart(p: PipetteDocument, drawing: CellDrawing | null): readonly Fragment[] {
@@ -157,23 +190,57 @@ function protocolPart(plan: PlanDocument): readonly Fragment[] {
   const main = mainLadder(plan);
   const sweeps = main === null ? plan.protocol.repeats : Math.max(...plan.protocol.ladders.map(rungCount));
   const owned = { area: 'Protocol' } as const;
+  const hold = holdingPart(plan, main?.ladder.lane);
   if (main === null) {
     return [
+      ...hold,
       { kind: 'opening', ...owned, key: 'protocol', label: 'Protocol', words: plan.protocol.name },
       say(sweeps === 1 ? ' once' : ` ${sweeps} times`),
     ];
   }
-  const verb = main.ladder.number.endsWith('_ms') || main.ladder.number === 'rate_Hz' ? 'Vary ' : 'Step ';
+  const varies = main.ladder.number.endsWith('_ms') || main.ladder.number === 'rate_Hz';
+  const verb = hold.length === 0 ? (varies ? 'Vary ' : 'Step ') : varies ? 'vary ' : 'step ';
   if (main.increment === null) {
     const words = `${givenNumber(main.first)}…${given(main.last, main.unit)}`;
     return [
+      ...hold,
       say(verb),
       { kind: 'opening', ...owned, key: 'rungs', label: 'Ladder', words },
       say(' in '),
       { kind: 'opening', ...owned, key: 'sweeps', label: 'Sweeps', words: count(sweeps) },
     ];
   }
-  return [say(verb), ...rungParts(main), say(' in '), sweepsPart(main)];
+  return [...hold, say(verb), ...rungParts(main), say(' in '), sweepsPart(main)];
+}
+
+/** "Hold −70 mV, ": the level that the main ladder's lane sets out from. */
+function holdingPart(plan: PlanDocument, letter: PipetteLetter | undefined): readonly Fragment[] {
+  const lane = plan.protocol.lanes.find((l) => letter === undefined || l.pipette === letter);
+  if (lane === undefined) return [];
+  const of = (p: PlanDocument): number => p.protocol.lanes.find((l) => l.pipette === lane.pipette)?.holding ?? 0;
+  return [
+    say('Hold '),
+    number({
+      key: 'holding',
+      area: 'Protocol',
+      label: `Holding level of ${lane.pipette}`,
+      value: lane.holding,
+      unit: lane.unit,
+      step: lane.unit === 'mV' ? 5 : 10,
+      least: lane.unit === 'mV' ? -1000 : -1e6,
+      most: lane.unit === 'mV' ? 1000 : 1e6,
+      undo: `holding level of ${lane.pipette}`,
+      read: of,
+      change: (p, holding) => ({
+        ...p,
+        protocol: {
+          ...p.protocol,
+          lanes: p.protocol.lanes.map((l) => (l.pipette === lane.pipette ? { ...l, holding } : l)),
+        },
+      }),
+    }),
+    say(', '),
+  ];
 }
 
 function rungParts(main: MainLadder): readonly Fragment[] {
@@ -281,7 +348,10 @@ function number(
     step: 1,
     isWhole: false,
     ...rest,
-    undoWords: numberWords(undo, f.unit, read),
+    // Where rungs do not meet the number typed, both stand in the words.
+    undoWords: (typed) => (before, after) =>
+      numberWords(undo, f.unit, read)(before, after) +
+      (read(after) === typed ? '' : `, nearest to ${givenNumber(typed)}`),
   };
 }
 
@@ -296,7 +366,7 @@ function count(sweeps: number): string {
 /** The sentence as plain text, for readers and the window's title. */
 export function sentenceText(fragments: readonly Fragment[]): string {
   return fragments
-    .map((f) => (f.kind === 'letter' ? `pipette ${f.letter} on ` : f.words))
+    .map((f) => (f.kind === 'letter' ? `pipette ${f.letter} on ` : f.words + ('key' in f ? (f.tail ?? '') : '')))
     .join('')
     .replaceAll(minus, 'minus ');
 }

@@ -139,8 +139,8 @@ export function runKey(event: KeyboardEvent): void {
   const target = event.target instanceof Element ? event.target : null;
   if (!(action.inFields ?? false)) {
     if (target?.closest('input, textarea, select, [contenteditable]')) return;
-    // On a button Space presses the button; arrows belong to menus, tabs and separators.
-    if (key === ' ' && target?.closest('button, summary, a')) return;
+    // On a button Space presses the button, except in the plan line, which is there to be rehearsed; arrows belong to menus, tabs and separators.
+    if (key === ' ' && target?.closest('button, summary, a') && !target.closest('[data-space=rehearses]')) return;
     if (target?.closest('[role=menu], [role=separator], [role=tablist], [data-arrows]') && key.startsWith('arrow'))
       return;
   }

@@ -52,6 +52,12 @@ export function record<T>(
   return first === undefined ? begin(value) : { changes: [first, ...rest], index: rest.length };
 }
 
+/** The value a gesture set out from: the one before its step, or the one in force where it has made none yet. */
+export function gestureStart<T>(history: History<T>, gesture: string): T {
+  const joins = history.index > 0 && at(history, history.index).gesture === gesture;
+  return at(history, joins ? history.index - 1 : history.index).value;
+}
+
 /** Ends a gesture: the next change with the same key is a step of its own. */
 export function settle<T>(history: History<T>): History<T> {
   const top = at(history, history.index);

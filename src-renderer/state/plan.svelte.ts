@@ -2,7 +2,18 @@
 import type { PlanDocument } from '../../src-main/contract/documents.ts';
 import type { OpenedPlan } from '../../src-main/contract/requests.ts';
 import { ask } from './ask.ts';
-import { begin, present, record, redone, redoWords, settle, undone, undoWords, type History } from './history.ts';
+import {
+  begin,
+  gestureStart,
+  present,
+  record,
+  redone,
+  redoWords,
+  settle,
+  undone,
+  undoWords,
+  type History,
+} from './history.ts';
 import { notices } from './notices.svelte.ts';
 
 const saveAfter_ms = 600;
@@ -58,6 +69,16 @@ class PlanState {
     if (next === this.#history) return;
     this.#history = next;
     this.#changed();
+  }
+
+  /**
+   * The same, but every change of the gesture is made to the plan as it stood when the gesture began: what a half-typed
+   * number did ("−6" on the way to "−60") leaves no trace.
+   */
+  changeAnew(words: ChangeWords, change: (plan: PlanDocument) => PlanDocument, gesture: string): void {
+    if (this.#history === null) return;
+    const start = gestureStart(this.#history, gesture);
+    this.change(words, () => change(start), gesture);
   }
 
   endGesture(): void {

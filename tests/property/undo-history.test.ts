@@ -3,6 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   begin,
+  gestureStart,
   present,
   record,
   redone,
@@ -43,6 +44,14 @@ describe('undo and redo', () => {
     const h = [13, 14, 15].reduce((now, v) => record(now, v, words, 'drag'), begin(12));
     expect(undoWords(h)).toBe('access 12 → 15 MΩ');
     expect(present(undone(h))).toBe(12);
+  });
+
+  it('a gesture knows where it set out from, however far it has gone, and only while it lasts', () => {
+    const h = [13, 14].reduce((now, v) => record(now, v, 'x', 'drag'), begin(12));
+    expect(gestureStart(h, 'drag')).toBe(12);
+    expect(gestureStart(h, 'another')).toBe(14);
+    expect(gestureStart(settle(h), 'drag')).toBe(14);
+    expect(gestureStart(begin(12), 'drag')).toBe(12);
   });
 
   it('a gesture that comes back to where it began is no step, and the value is the very same', () => {
