@@ -7,6 +7,10 @@ interface Command {
 }
 
 const commands: Readonly<Record<string, Command>> = {
+  channels: {
+    words: 'the published channels a cell can name',
+    load: async () => (await import('./channels.ts')).channels,
+  },
   check: {
     words: 'what a reader of cells makes of an SWC file',
     load: async () => (await import('./check.ts')).check,

@@ -1,6 +1,7 @@
 import type { Answers, CheckedQuestion, RequestName } from '../contract/requests.ts';
 import type { Desk } from './desk.ts';
 import { cellHandlers } from './handlers/cell.ts';
+import { channelHandlers } from './handlers/channels.ts';
 import { exchangeHandlers } from './handlers/exchange.ts';
 import { notebookHandlers } from './handlers/notebook.ts';
 import { planHandlers } from './handlers/plan.ts';
@@ -15,6 +16,7 @@ export type Handlers = {
 export const handlers: Handlers = {
   ...notebookHandlers,
   ...cellHandlers,
+  ...channelHandlers,
   ...planHandlers,
   ...sessionHandlers,
   ...rehearsalHandlers,
