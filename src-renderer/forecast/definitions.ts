@@ -101,9 +101,9 @@ export const definitions: Readonly<Record<Topic, Definition>> = {
   },
   bias: {
     title: 'Bias',
-    formula: 'recorded − true; in per cent of |true|',
+    formula: 'recorded − true; in words ||recorded| − |true|| ÷ |true|',
     words:
-      'The one number speaks for the sweep with the largest relative bias among those whose true value is at least a tenth of the largest: nearer to zero a ratio says nothing.',
+      'Too large and too small go by size, whatever the sign: a current of −666 pA that is −941 reads 29 % too small. Where the signs differ, and for voltages, it is too positive or too negative. The one number speaks for the sweep with the largest relative bias among those whose true value is at least a tenth of the largest: nearer to zero a ratio says nothing.',
     source: 'Definition.',
   },
   attenuation: {

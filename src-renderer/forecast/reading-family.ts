@@ -2,6 +2,7 @@ import type { PipetteLetter, ProtocolDocument } from '../../src-main/contract/do
 import type { ReadingForecast } from '../../src-main/contract/results.ts';
 import type { Axis, Series } from '../charts/series.ts';
 import { numberUnit, numberWords } from '../protocol/ladder-rungs.ts';
+import { familyScale, orZero } from '../text/rounding.ts';
 
 /** What the family is drawn against: what the first ladder sets, or the sweep's number without a ladder. */
 export function familyAxis(protocol: ProtocolDocument): Axis {
@@ -33,16 +34,17 @@ export function familySeries(reading: ReadingForecast, letter: PipetteLetter, as
   const order = familyOrder(reading);
   const x = order.map((point) => point.x);
   const hue = { token: letter === 'A' ? '--a' : '--b' };
-  const recorded = order.map((point) => reading.recorded[point.sweep] ?? NaN);
+  const scale = familyScale(reading.recorded, reading.truth);
+  const recorded = order.map((point) => orZero(reading.recorded[point.sweep] ?? NaN, scale));
   const { truth } = reading;
   const common = { x, stroke: letter === 'A' ? 'solid' : 'dashed', drawn: 'line and points', paint: hue } as const;
   if (truth && asBias) {
-    const y = order.map((point, i) => (recorded[i] ?? NaN) - (truth[point.sweep] ?? NaN));
+    const y = order.map((point, i) => orZero((recorded[i] ?? NaN) - orZero(truth[point.sweep] ?? NaN, scale), scale));
     return [{ ...common, key: 'bias', label: 'recorded − true', y }];
   }
   const series: Series[] = [{ ...common, key: 'recorded', label: `recorded by ${letter}`, y: recorded }];
   if (truth) {
-    const y = order.map((point) => truth[point.sweep] ?? NaN);
+    const y = order.map((point) => orZero(truth[point.sweep] ?? NaN, scale));
     series.push({
       key: 'true',
       label: 'true',

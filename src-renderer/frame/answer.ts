@@ -2,6 +2,7 @@
 import type { PlanDocument } from '../../src-main/contract/documents.ts';
 import type { RefusalData } from '../../src-main/contract/refusal.ts';
 import type { Forecast, PassiveEstimate, ReadingForecast } from '../../src-main/contract/results.ts';
+import { biasWords, type BiasUnit } from '../text/bias.ts';
 import { figure, given, percent, scaled, signedFigure, thinSpace } from '../text/quantity.ts';
 
 export interface AskedReading {
@@ -66,16 +67,15 @@ export function askedReading(plan: PlanDocument, forecast: Forecast): AskedReadi
     sweep,
     reads: scaled(reads, reading.unit),
     is: is === null ? null : scaled(is, reading.unit),
-    verdict: is === null ? null : verdict(reads, is, question.bias_percent),
+    verdict: is === null ? null : verdict(reads, is, question.bias_percent, reading.unit),
   };
 }
 
-function verdict(reads: number, is: number, accepted_percent: number): AskedReading['verdict'] {
+function verdict(reads: number, is: number, accepted_percent: number, unit: BiasUnit): AskedReading['verdict'] {
   const bias = is === 0 ? Infinity : (100 * Math.abs(reads - is)) / Math.abs(is);
   const asked = given(accepted_percent, '%');
-  return bias <= accepted_percent
-    ? { kind: 'holds', words: `within the ${asked} asked, off by ${figure(bias, '%', 2)}` }
-    : { kind: 'outside', words: `the ${asked} asked, off by ${figure(bias, '%', bias < 10 ? 2 : 3)}` };
+  const words = `the ${asked} asked, ${biasWords(reads, is, unit)}`;
+  return bias <= accepted_percent ? { kind: 'holds', words: `within ${words}` } : { kind: 'outside', words };
 }
 
 /** The second row of a finished rehearsal. */

@@ -1,4 +1,6 @@
 import type { ReadingForecast } from '../../src-main/contract/results.ts';
+import { biasWords } from '../text/bias.ts';
+import { familyScale, orZero } from '../text/rounding.ts';
 
 export interface ReadingRow {
   readonly id: string;
@@ -9,16 +11,20 @@ export interface ReadingRow {
   /** Null where there is no truth to compare with. */
   readonly truth: number | null;
   readonly bias: number | null;
-  /** Of the true value; null where that is zero or unknown. */
-  readonly bias_percent: number | null;
+  /** The bias in words about size, "29 % too small"; "–" where the true value is zero or unknown. */
+  readonly words: string;
 }
 
-/** What each reading gives in one sweep: as recorded, as an ideal clamp would read it, and the difference. */
+/**
+ * What each reading gives in one sweep: as recorded, as an ideal clamp would read it, and the difference. What is rounding
+ * beside the reading's other sweeps is 0.
+ */
 export function readingRows(readings: readonly ReadingForecast[], sweep: number): ReadingRow[] {
   return readings.map((reading) => {
-    const recorded = reading.recorded[sweep] ?? NaN;
-    const truth = reading.truth ? (reading.truth[sweep] ?? NaN) : null;
-    const bias = truth === null ? null : recorded - truth;
+    const scale = familyScale(reading.recorded, reading.truth);
+    const recorded = orZero(reading.recorded[sweep] ?? NaN, scale);
+    const truth = reading.truth ? orZero(reading.truth[sweep] ?? NaN, scale) : null;
+    const bias = truth === null ? null : orZero(recorded - truth, scale);
     return {
       id: reading.reading,
       name: reading.name,
@@ -26,7 +32,7 @@ export function readingRows(readings: readonly ReadingForecast[], sweep: number)
       recorded,
       truth,
       bias,
-      bias_percent: bias === null || truth === null || truth === 0 ? null : (100 * bias) / Math.abs(truth),
+      words: truth === null ? '–' : biasWords(recorded, truth, reading.unit, scale),
     };
   });
 }

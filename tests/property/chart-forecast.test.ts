@@ -116,12 +116,9 @@ describe('a reading over its ladder', () => {
     expect(familySeries(reading, 'A', true)[0]?.y).toEqual([-1, 20, -3]);
   });
   it('bias is recorded less true; its share is left out where the truth is zero', () => {
-    expect(readingRows([reading], 1)[0]).toMatchObject({
-      bias: -1,
-      bias_percent: expect.closeTo(-9.0909, 3) as number,
-    });
-    expect(readingRows([reading], 2)[0]).toMatchObject({ bias: 20, bias_percent: null });
-    expect(readingRows([{ ...reading, truth: null }], 0)[0]).toMatchObject({ truth: null, bias: null });
+    expect(readingRows([reading], 1)[0]).toMatchObject({ bias: -1, words: '9.1\u2009% too small' });
+    expect(readingRows([reading], 2)[0]).toMatchObject({ bias: 20, words: '–' });
+    expect(readingRows([{ ...reading, truth: null }], 0)[0]).toMatchObject({ truth: null, bias: null, words: '–' });
   });
   it('is drawn against what the first ladder sets, in its unit', () => {
     const protocol = protocolSchema.parse({
