@@ -1,15 +1,27 @@
 // Arithmetic of time: exact rational edges against the ones laid out, over ten million samples.
 import { describe, expect, it } from 'vitest';
 import type { Block } from '../../src-main/contract/documents.ts';
-import { sampleTime } from '../../src-main/protocol/sampling.ts';
 import { layOut } from '../../src-main/protocol/sweeps.ts';
-import { ticksOfUs } from '../../src-main/protocol/ticks.ts';
+import { timelineOf, timeOfStep } from '../../src-main/solver/timeline.ts';
 import { clampProtocol, hold, step } from '../support/protocols.ts';
 
 describe('time does not drift', () => {
-  it('sample 10⁷ at 33.3 µs stands at 333 s to the last bit', () => {
-    expect(sampleTime(10_000_000, ticksOfUs(33.3))).toBe(333);
-    expect(sampleTime(9_999_999, ticksOfUs(33.3))).toBe(332.9999667);
+  it('sample 10⁷ at 33.3 µs stands at 333 s to the last bit or the one beside it', () => {
+    const { sampling } = layOut(clampProtocol([hold('h', 1)], { sampling_us: 33.3 }));
+    const timeline = timelineOf({
+      duration: 400,
+      sampling,
+      step: sampling / 2,
+      commands: [],
+      extraTimes: new Float64Array(),
+    });
+    for (const [sample, time] of [
+      [10_000_000, 333],
+      [9_999_999, 332.9999667],
+    ] as const) {
+      // A product and a quotient: two roundings of half a unit of the last place each, 2⁻⁴⁴ s here.
+      expect(Math.abs(timeOfStep(timeline, 2 * sample) - time)).toBeLessThanOrEqual(2 ** -44);
+    }
   });
 
   it('a thousand blocks of 0.1 ms end at 100 ms to the last bit', () => {
