@@ -83,7 +83,9 @@ export function timelineOf(input: {
       stops.push({ grid, rest, time, breaks, extras });
     }
   }
-  return { step, sampling, stepsPerSample, samples: Math.floor(duration / sampling + same) + 1, stops };
+  // Counted by the steps, so that every sample is one that the steps come to.
+  const samples = Math.floor((stops.at(-1)?.grid ?? 0) / stepsPerSample) + 1;
+  return { step, sampling, stepsPerSample, samples, stops };
 }
 
 function placeOf(time: Second, sampling: Second, stepsPerSample: number): [number, number] {

@@ -50,6 +50,15 @@ describe('time does not drift', () => {
     for (const k of [1, 2, 99_998, 99_999]) expect(Math.abs(pulses[k]!.start - k / 3)).toBeLessThan(8e-12);
   });
 
+  it('a sweep has no sample that its steps do not come to', () => {
+    // Five nanoseconds short of three intervals of 10 ms, in steps of 10 µs: half a thousandth of a step.
+    const given = { sampling: 0.01, step: 1e-5, commands: [], extraTimes: new Float64Array() };
+    expect(timelineOf({ ...given, duration: 0.03 - 5e-9 }).samples).toBe(3);
+    expect(timelineOf({ ...given, duration: 0.03 }).samples).toBe(4);
+    // Rounding of an end is no shortage: a picosecond.
+    expect(timelineOf({ ...given, duration: 0.03 - 1e-12 }).samples).toBe(4);
+  });
+
   it('the number of samples is right where the quotient of doubles is not', () => {
     // 0.3 ms / 0.1 ms is 2.9999999999999996 in doubles.
     const laid = layOut(clampProtocol([hold('h', 0.3)], { sampling_us: 100 }));
