@@ -32,5 +32,7 @@ export const shellCommands = [
   'command palette',
   'keys',
   'toggle theme',
+  /** Another notebook is about to take this one's place. */
+  'keep draft',
 ] as const;
 export type ShellCommand = (typeof shellCommands)[number];

@@ -91,7 +91,10 @@ export const actions: readonly Action[] = [
   { words: 'All keys', key: '?', group: 'Help', run: () => overlays.show({ kind: 'keys' }) },
 ];
 
-const byShell: Record<ShellCommand, string> = {
+/** Commands that are actions of the page. */
+type PageCommand = Exclude<ShellCommand, 'keep draft'>;
+
+const byShell: Record<PageCommand, string> = {
   'new notebook': 'New notebook',
   'open notebook': 'Open a notebook',
   'save notebook as': 'Save the notebook under another name',
@@ -104,7 +107,7 @@ const byShell: Record<ShellCommand, string> = {
   'toggle theme': 'Light or dark',
 };
 
-export function runShellCommand(command: ShellCommand): void {
+export function runShellCommand(command: PageCommand): void {
   actions.find((action) => action.words === byShell[command])?.run();
 }
 

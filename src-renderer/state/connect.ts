@@ -3,6 +3,7 @@ import { bridge } from '../bridge.ts';
 import { runShellCommand } from './actions.ts';
 import { area } from './area.svelte.ts';
 import { selectionAtHome } from './at-home.ts';
+import { channelLibrary } from './channel-library.svelte.ts';
 import { cursor } from './cursor.svelte.ts';
 import { drawing } from './drawing.svelte.ts';
 import { estimate } from './estimate.svelte.ts';
@@ -10,7 +11,9 @@ import { jobs } from './jobs.svelte.ts';
 import { notebook } from './notebook.svelte.ts';
 import { notices } from './notices.svelte.ts';
 import { plan } from './plan.svelte.ts';
+import { ranCell } from './ran-cell.svelte.ts';
 import { rehearsal } from './rehearsal.svelte.ts';
+import { session } from './session.svelte.ts';
 import { selection } from './selection.svelte.ts';
 import { isoDay } from '../text/dates.ts';
 
@@ -21,8 +24,18 @@ export function connect(): void {
   });
   area.whenShown = selectAtHome;
   notebook.whenPlanShown = selectAtHome;
+  notebook.beforeLeaving = () => session.keep();
   rehearsal.sessionNow = () => notebook.sessionOf(isoDay(new Date()));
-  rehearsal.whenStored = () => void notebook.load(false);
+  rehearsal.notebookNow = () => notebook.overview?.status.path ?? '';
+  rehearsal.whenStored = () => {
+    void notebook.load(false);
+    void session.refresh();
+  };
+  rehearsal.whenShown = (stored) => {
+    // The sweep that decides is looked at first.
+    cursor.sweep = stored.forecast.clamp?.worstSweep ?? Math.min(cursor.sweep, stored.summary.sweeps - 1);
+    void ranCell.follow(stored);
+  };
   bridge.onEvent((event) => {
     jobs.hear(event);
     rehearsal.hear(event);
@@ -32,12 +45,21 @@ export function connect(): void {
       void notebook.load(false);
     }
   });
-  bridge.onCommand(runShellCommand);
-  // Leaving within the moment before a draft is kept must not lose it.
-  window.addEventListener('pagehide', () => void plan.keep());
-  document.addEventListener('visibilitychange', () => {
-    if (document.visibilityState === 'hidden') void plan.keep();
+  bridge.onCommand((command) => {
+    if (command === 'keep draft') void plan.keep();
+    else runShellCommand(command);
   });
+  // Leaving within the moment before a draft is kept must not lose it.
+  const keepAll = (): void => {
+    void plan.keep();
+    void session.keep();
+  };
+  window.addEventListener('pagehide', keepAll);
+  document.addEventListener('visibilitychange', () => {
+    if (document.visibilityState === 'hidden') keepAll();
+  });
+  // For their titles: where curves are shown, they are asked for again at the cell's temperature.
+  void channelLibrary.load(22);
   void notebook.load(true);
 }
 

@@ -3,6 +3,7 @@ import { mkdirSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { EngineClient, type StartEngine } from '../engine-client.ts';
 import { defaultNotebook, homeFolder } from '../home.ts';
+import type { ShellCommand } from '../../contract/bridge.ts';
 import { readPage } from '../pages.ts';
 import { setMenu } from './menu.ts';
 import { NotebookChoice } from './notebook-choice.ts';
@@ -11,8 +12,10 @@ import { createWindow } from './window.ts';
 
 const scheme = 'holdfast-app';
 const origin = `${scheme}://window`;
-/** How long a last save may take when the window closes. */
+/** How long a last save may take when the window closes or another notebook takes its place. */
 const lastWord_ms = 1500;
+/** Ample for a message to the page and its answer's way back. */
+const messageTrip_ms = 200;
 
 /** The whole Electron application, but for how its engine is started. */
 export function startApp(engineAt: (enginePath: string) => StartEngine): void {
@@ -114,6 +117,10 @@ async function showNotebook(
   if (window.isMinimized()) window.restore();
   window.focus();
   if (path === null) return;
+  // What was typed within the last moment belongs to the notebook that is open now.
+  window.webContents.send('command', 'keep draft' satisfies ShellCommand);
+  await new Promise((resolve) => setTimeout(resolve, messageTrip_ms));
+  await client.quiet(lastWord_ms);
   const answer = await client.ask('notebook open', { path });
   if (answer.ok) {
     choice.allow(answer.value.path);
