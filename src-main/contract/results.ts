@@ -162,6 +162,8 @@ export interface ClampSweep {
   readonly settling_ms: Float64Array;
   /** Steady error at the clamp's site: the share of the access resistance. The rest is the cable's. */
   readonly accessPart_mV: number;
+  /** The access part of every compartment's steady error: that at the site of the clamp nearest to it along the tree. */
+  readonly access_mV: Float64Array;
 }
 export interface DualSite {
   readonly from: PipetteLetter;

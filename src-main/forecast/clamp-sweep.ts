@@ -7,6 +7,7 @@ import { blockWithin, resolveWindow, type TimeWindow } from '../protocol/window.
 import type { PlacedPipette, PreparedPlan } from '../solver/prepare.ts';
 import { fromSi, toSi, type Second, type Volt } from '../units/si.ts';
 import { clampMeter } from './clamp-error.ts';
+import { nearestClamp } from './nearest-clamp.ts';
 import { reachByRegion, reachOf } from './reach.ts';
 
 export interface SweepClampMeter {
@@ -68,8 +69,10 @@ export function sweepClampMeter(prepared: ClampPlan, sweep: LaidSweep): SweepCla
     blockStart,
     tolerance,
   });
+  const clamps = prepared.pipettes.filter(({ mode }) => mode === 'voltage clamp').map(({ compartment }) => compartment);
   const result = (): ClampSweep => {
     const { steady, worst, settling } = meter.measure();
+    const nearest = nearestClamp(grid, clamps);
     return {
       sweep: sweep.index,
       level_mV: level === null ? null : fromSi(level, 'mV'),
@@ -81,6 +84,7 @@ export function sweepClampMeter(prepared: ClampPlan, sweep: LaidSweep): SweepCla
       worst_mV: worst.map((V) => fromSi(V, 'mV')),
       settling_ms: settling.map((s) => fromSi(s, 'ms')),
       accessPart_mV: fromSi(steady[pipette.compartment] ?? NaN, 'mV'),
+      access_mV: Float64Array.from(nearest, (clamp) => fromSi(steady[clamps[clamp] ?? -1] ?? NaN, 'mV')),
     };
   };
   return { onSample: meter.onSample, result };

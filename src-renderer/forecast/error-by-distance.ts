@@ -8,15 +8,15 @@ export const errorParts = ['whole', 'access', 'cable'] as const;
 export type ErrorPart = (typeof errorParts)[number];
 
 /**
- * What one sweep says of every compartment, grid order. The access part is the steady error at the clamp's site, the same
- * for all; the cable part is what is left. Only the steady error is split: the worst is reached at another time everywhere.
+ * What one sweep says of every compartment, grid order. The access part is the steady error at the site of the nearest
+ * clamp; the cable part is what is left. Only the steady error is split: the worst is reached at another time everywhere.
  */
 export function errorValues(sweep: ClampSweep, kind: ErrorKind, part: ErrorPart): Float64Array {
   if (kind === 'settling') return sweep.settling_ms;
   if (kind === 'worst') return sweep.worst_mV;
   if (part === 'whole') return sweep.steady_mV;
-  const access = sweep.accessPart_mV;
-  return sweep.steady_mV.map((error) => (part === 'access' ? access : error - access));
+  if (part === 'access') return sweep.access_mV;
+  return sweep.steady_mV.map((error, k) => error - (sweep.access_mV[k] ?? NaN));
 }
 
 /** The tolerance of one sweep in mV: as given, or its share of |level − holding|. Null where that step is zero or unknown. */

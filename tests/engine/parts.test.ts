@@ -67,6 +67,7 @@ describe('numerical uncertainty', () => {
         worst_mV: new Float64Array(),
         settling_ms: new Float64Array(),
         accessPart_mV: access,
+        access_mV: new Float64Array(steady.length).fill(access),
       })),
       reach,
       reachByRegion: [{ region: 'soma', area_um2: 1000, reach }],

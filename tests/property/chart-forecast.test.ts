@@ -41,6 +41,7 @@ const sweep: ClampSweep = {
   worst_mV: Float64Array.of(50, -60, -61, 55),
   settling_ms: Float64Array.of(1, 4, NaN, 2),
   accessPart_mV: 2,
+  access_mV: Float64Array.of(2, 2, 1, 2),
 };
 const clamp: ClampForecast = {
   pipette: 'A',
@@ -63,6 +64,7 @@ describe('clamp error along the cell', () => {
     const access = errorValues(sweep, 'steady', 'access');
     const cable = errorValues(sweep, 'steady', 'cable');
     whole.forEach((value, k) => expect((access[k] ?? NaN) + (cable[k] ?? NaN)).toBeCloseTo(value, 12));
+    expect(Array.from(cable)).toEqual([0, -5, -10, 2]);
     expect(errorValues(sweep, 'worst', 'cable')).toBe(sweep.worst_mV);
   });
 

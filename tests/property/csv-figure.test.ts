@@ -45,6 +45,7 @@ const stored = (name = 'Na & K <test>'): Omit<StoredRehearsal, 'plan'> => ({
           worst_mV: Float64Array.of(1, -9),
           settling_ms: Float64Array.of(0.5, NaN),
           accessPart_mV: 0.1,
+          access_mV: Float64Array.of(0.1, 0.1),
         },
       ],
       reach: 0.5,

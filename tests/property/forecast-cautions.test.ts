@@ -17,6 +17,7 @@ const sweep = (index: number, level_mV: number | null, worst: readonly number[])
   worst_mV: Float64Array.from(worst),
   settling_ms: new Float64Array(2),
   accessPart_mV: 0,
+  access_mV: new Float64Array(2),
 });
 
 describe('membrane that fires under the clamp', () => {
