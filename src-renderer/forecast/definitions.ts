@@ -1,6 +1,8 @@
 // What each figure means, its formula, and who says so (references from memory). Shown beside the figure; the engine's own
 // notes are nearer the code.
 
+import type { Forecast } from '../../src-main/contract/results.ts';
+
 export interface Definition {
   readonly title: string;
   readonly formula: string;
@@ -26,6 +28,29 @@ export const topics = [
   'numerical uncertainty',
 ] as const;
 export type Topic = (typeof topics)[number];
+
+const ofClamp: readonly Topic[] = [
+  'clamp error',
+  'worst error',
+  'settling time',
+  'access part',
+  'cable part',
+  'reach',
+  'trust distance',
+  'clamp bandwidth',
+];
+const ofTwoSites: readonly Topic[] = ['attenuation', 'input resistance', 'transfer resistance'];
+
+/** The topic, or where the forecast has no such figure one that it has: no clamp error stands over a current clamp. */
+export function topicWithin(topic: Topic, forecast: Pick<Forecast, 'clamp' | 'dualSite' | 'readings'>): Topic {
+  const isMissing =
+    (forecast.clamp === null && ofClamp.includes(topic)) ||
+    (forecast.dualSite === null && ofTwoSites.includes(topic)) ||
+    (forecast.readings.length === 0 && (topic === 'reading' || topic === 'bias'));
+  if (!isMissing) return topic;
+  if (forecast.clamp !== null) return 'clamp error';
+  return forecast.readings.length > 0 ? 'reading' : 'largest current';
+}
 
 export const definitions: Readonly<Record<Topic, Definition>> = {
   'clamp error': {
@@ -65,9 +90,9 @@ export const definitions: Readonly<Record<Topic, Definition>> = {
   },
   reach: {
     title: 'Reach',
-    formula: 'Σ area with |error| ≤ tolerance ÷ Σ area, in the worst sweep',
+    formula: 'Σ area with |error| ≤ tolerance ÷ Σ area, at the end of the window',
     words:
-      'The share of membrane, spines and axon included, that the clamp holds within the tolerance at the end of the window, in whichever sweep that share is smallest. A tolerance in per cent is of |level − holding|; sweeps without a step are left out.',
+      'The share of membrane, spines and axon included, that the clamp holds within the tolerance at the end of the window. The sweep in which it is smallest speaks for the plan. A tolerance in per cent is of |level − holding|; sweeps without a step are left out.',
     source: 'Definition; a tolerance of 5 mV is common practice.',
   },
   'trust distance': {
@@ -86,9 +111,9 @@ export const definitions: Readonly<Record<Topic, Definition>> = {
   },
   'largest current': {
     title: 'Largest current',
-    formula: 'max |I| through the pipette, over all sweeps',
+    formula: 'max |I| from the pipette into the cell, over all sweeps',
     words:
-      'Compare it with what the headstage can deliver: beyond that range the amplifier saturates and the clamp is lost.',
+      'In voltage clamp the amplifier supplies it through the access. In current clamp it is not the command: while the voltage jumps, as in a spike, the stray capacitance of the pipette takes and gives current of its own, C·dV/dt, so that more may enter the cell than is commanded. Compare it with what the headstage can deliver: beyond that range the amplifier saturates and the clamp is lost.',
     source: 'From the predicted recording.',
   },
   reading: {

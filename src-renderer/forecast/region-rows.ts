@@ -1,14 +1,15 @@
 import type { ClampForecast, ClampSweep, CompartmentTable } from '../../src-main/contract/results.ts';
 
+/** How one sweep fares in one region. */
 export interface RegionRow {
   readonly region: string;
   readonly area_um2: number;
-  /** In the worst sweep, 0 to 1. */
+  /** 0 to 1; NaN where it was not told for this sweep. */
   readonly reach: number;
-  /** The largest steady and worst |error| in the sweep on show, signed; NaN where the grid is not at hand. */
+  /** The largest steady and worst |error|, signed; NaN where the grid is not at hand. */
   readonly steady_mV: number;
   readonly worst_mV: number;
-  /** The last compartment to settle in the sweep on show; null: some membrane does not settle in the window. */
+  /** The last compartment to settle; null: some membrane does not settle in the window. */
   readonly settles_ms: number | null;
   /** Share of the region's membrane that does not settle in the window, 0 to 1. */
   readonly unsettled: number;
@@ -24,7 +25,7 @@ function largest(values: Float64Array, members: readonly number[]): number {
   return best;
 }
 
-/** Each region's reach, and how one sweep fares in it. */
+/** Every region in one sweep. */
 export function regionRows(clamp: ClampForecast, sweep: ClampSweep, table: CompartmentTable | null): RegionRow[] {
   return clamp.reachByRegion.map(({ region, area_um2, reach }) => {
     const members: number[] = [];
@@ -40,14 +41,23 @@ export function regionRows(clamp: ClampForecast, sweep: ClampSweep, table: Compa
       if (Number.isNaN(settles)) unsettled += area;
       else if (!(settles <= last)) last = settles;
     }
+    const own = sweep.reachByRegion?.find((one) => one.region === region)?.reach;
     return {
       region,
       area_um2,
-      reach,
+      // Older rehearsals tell it by region for their worst sweep alone.
+      reach: own ?? (sweep.sweep === clamp.worstSweep ? reach : NaN),
       steady_mV: largest(sweep.steady_mV, members),
       worst_mV: largest(sweep.worst_mV, members),
       settles_ms: unsettled > 0 || members.length === 0 ? null : last,
       unsettled: whole > 0 ? unsettled / whole : NaN,
     };
   });
+}
+
+/** Whose reach it is: "sweep 3", and whether that is the worst there is. */
+export function sweepWords(clamp: ClampForecast, sweep: ClampSweep): string {
+  const at = `sweep ${sweep.sweep + 1}`;
+  if (clamp.sweeps.length === 1) return at;
+  return sweep.sweep === clamp.worstSweep ? `${at}, the worst of all` : at;
 }

@@ -14,9 +14,9 @@ function keep(file: TextFile | null): void {
   if (file) keepFile(file.name, typeOf(file.name), file.text);
 }
 
-/** One CSV file per kind of trace, full resolution. */
+/** All sweeps in one CSV file, full resolution; one per sweep where one would be too long. */
 export async function keepTraces(rehearsalId: number): Promise<void> {
-  for (const file of (await askOrSay('export traces', { rehearsalId })) ?? []) {
+  for (const file of (await askOrSay('export traces', { rehearsalId, asOne: true })) ?? []) {
     keep(file);
     // A browser drops downloads that come all at once.
     await new Promise((resolve) => setTimeout(resolve, 250));

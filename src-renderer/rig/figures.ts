@@ -27,7 +27,17 @@ export function derivedFigures(
   drawing: CellDrawing | null,
   estimate: PassiveEstimate | null,
 ): readonly DerivedFigure[] {
-  return pipette.mode === 'voltage clamp' ? clampFigures(pipette, drawing, estimate) : currentFigures(pipette);
+  const own = pipette.mode === 'voltage clamp' ? clampFigures(pipette, drawing, estimate) : currentFigures(pipette);
+  const resistance = estimate?.inputResistances_MOhm[pipette.letter];
+  if (resistance === undefined) return own;
+  return [
+    ...own,
+    {
+      words: 'input resistance at its site, estimate',
+      value: scaled(resistance, 'MΩ'),
+      note: 'steady, gates frozen, no clamp active',
+    },
+  ];
 }
 
 function clampFigures(

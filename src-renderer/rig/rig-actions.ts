@@ -1,6 +1,7 @@
 // What the Rig area does to the plan.
 import type { PipetteLetter } from '../../src-main/contract/documents.ts';
 import { drawing } from '../state/drawing.svelte.ts';
+import { estimate } from '../state/estimate.svelte.ts';
 import {
   pipetteOf,
   withMode,
@@ -25,10 +26,13 @@ export function setNumber(letter: PipetteLetter, row: PipetteRow, value: number)
 }
 
 export function setMode(letter: PipetteLetter, mode: Mode): void {
-  const resistance = drawing.drawing?.inputResistance_MOhm ?? null;
+  const atSite = estimate.of === plan.document ? estimate.value?.inputResistances_MOhm[letter] : undefined;
+  const resistance = atSite ?? drawing.drawing?.inputResistance_MOhm ?? null;
   plan.change(`${letter} to ${mode}, levels converted`, (p) => withMode(p, letter, mode, resistance));
   const by =
-    resistance === null ? '100 MΩ, for want of a better figure' : `its input resistance, ${resistance.toFixed(0)} MΩ`;
+    resistance === null
+      ? '100 MΩ, for want of a better figure'
+      : `the input resistance ${atSite === undefined ? 'of the cell' : 'at its site'}, ${resistance.toFixed(0)} MΩ`;
   notices.say(`${letter} is in ${mode}. The levels of its lane were converted by ${by}; look them over.`, () =>
     plan.undo(),
   );

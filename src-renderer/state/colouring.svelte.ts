@@ -5,7 +5,9 @@ import { area, type Area } from './area.svelte.ts';
 import { cursor } from './cursor.svelte.ts';
 import { drawing } from './drawing.svelte.ts';
 import { estimate } from './estimate.svelte.ts';
+import { isSameShape, onGrid } from './on-grid.ts';
 import { plan } from './plan.svelte.ts';
+import { ranCell } from './ran-cell.svelte.ts';
 import { rehearsal } from './rehearsal.svelte.ts';
 
 export const colourings = [
@@ -80,16 +82,28 @@ function control(): Colouring | null {
 }
 
 function fromForecast(name: Exclude<ColouringName, 'nothing' | 'control'>): Colouring | null {
-  const clamp = rehearsal.isCurrent ? rehearsal.forecast?.clamp : null;
-  if (!clamp) return null;
-  const sweep = clamp.sweeps.find((s) => s.sweep === cursor.sweep) ?? clamp.sweeps[clamp.worstSweep];
-  if (sweep === undefined) return null;
+  const clamp = rehearsal.forecast?.clamp;
+  const sweep = clamp?.sweeps.find((s) => s.sweep === cursor.sweep) ?? clamp?.sweeps[clamp.worstSweep];
+  const table = drawing.drawing?.compartments;
+  const ran = ranCell.drawing?.compartments;
+  if (!clamp || sweep === undefined || !table || ran?.count !== sweep.steady_mV.length) return null;
+  // An older rehearsal is coloured on the cell as it stands, where that is the same cell.
+  if (!rehearsal.isCurrent && !(rehearsal.ran && isSameShape(rehearsal.ran.cell, plan.document.cell))) return null;
+  const found = ofSweep(name, sweep, clamp.tolerance);
+  return found && { ...found, values: onGrid(found.values, ran, table) };
+}
+
+function ofSweep(
+  name: Exclude<ColouringName, 'nothing' | 'control'>,
+  sweep: ClampSweep,
+  tolerance: Tolerance,
+): Colouring | null {
   const common = { name, unit: 'mV', marks: [], isEstimate: false };
   switch (name) {
     case 'steady error':
-      return { ...common, label: 'clamp error at window end', ...signed(sweep.steady_mV, sweep, clamp.tolerance) };
+      return { ...common, label: 'clamp error at window end', ...signed(sweep.steady_mV, sweep, tolerance) };
     case 'worst error':
-      return { ...common, label: 'largest clamp error in window', ...signed(sweep.worst_mV, sweep, clamp.tolerance) };
+      return { ...common, label: 'largest clamp error in window', ...signed(sweep.worst_mV, sweep, tolerance) };
     case 'settling time': {
       const high = roundUp(largest(sweep.settling_ms));
       return {
@@ -128,7 +142,7 @@ function signed(
 /** The tolerance of one sweep in mV; a share of the step from holding where it is given in per cent. */
 function tolerance_mV(tolerance: Tolerance, sweep: ClampSweep): number | null {
   if (tolerance.unit === 'mV') return tolerance.value;
-  const holding = plan.document.protocol.lanes.find((lane) => lane.unit === 'mV')?.holding;
+  const holding = (rehearsal.ran ?? plan.document).protocol.lanes.find((lane) => lane.unit === 'mV')?.holding;
   if (holding === undefined || sweep.level_mV === null) return null;
   const step = Math.abs(sweep.level_mV - holding);
   return step === 0 ? null : (tolerance.value / 100) * step;

@@ -5,6 +5,11 @@ import type { CellDrawing } from '../../src-main/contract/results.ts';
 import { ask } from './ask.ts';
 import { newestOnly } from './late.ts';
 
+/** The places that compartments are cut for: pipettes, then probes. */
+export function sitesOf(plan: PlanDocument): Site[] {
+  return [...plan.rig.pipettes.map((p) => p.site), ...plan.probes.map((p) => p.site)];
+}
+
 class DrawingState {
   drawing = $state.raw<CellDrawing | null>(null);
   refusals = $state.raw<readonly RefusalData[]>([]);
@@ -14,7 +19,7 @@ class DrawingState {
 
   /** Asks for the drawing when the cell or the sites on it changed. */
   follow(plan: PlanDocument): void {
-    const sites = [...plan.rig.pipettes.map((p) => p.site), ...plan.probes.map((p) => p.site)];
+    const sites = sitesOf(plan);
     const key = JSON.stringify(sites);
     if (plan.cell === this.#cell && key === this.#sites) return;
     this.#cell = plan.cell;
