@@ -63,5 +63,5 @@ export const kAConnorStevens1971: StoredChannel = storedChannel({
   source:
     'Connor JA, Stevens CF (1971), J Physiol 213:31–53; constants as collected in Dayan P, Abbott LF (2001), Theoretical Neuroscience, ch. 6',
   fromMemory: false,
-  note: 'Crustacean axon (walking leg). The temperature is inferred from the factor 3.8 on the rates, not printed. The fit of the activation passes 1 between +40 and +98 mV, by at most 1.4 %, and is kept as published.',
+  note: 'Isolated gastropod neurons (1971) with constants of crustacean axons (1977), as a textbook collects them; preparations from memory. The temperature is inferred from the factor 3.8 on the rates, not printed. The fit of the activation passes 1 between +40 and +98 mV, by at most 1.4 %, and is kept as published.',
 });

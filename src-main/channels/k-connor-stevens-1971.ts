@@ -2,7 +2,7 @@ import type { StoredChannel } from './kinetics.ts';
 import { storedChannel } from './stored.ts';
 
 /**
- * Delayed-rectifier potassium conductance of a crustacean axon, I = g·n⁴·(V − E), E = −72 mV.
+ * Delayed-rectifier potassium conductance of the Connor–Stevens membrane, I = g·n⁴·(V − E), E = −72 mV.
  *
  *     α_n = 0.02·(V + 45.7)/(1 − exp(−(V + 45.7)/10))    β_n = 0.25·exp(−(V + 55.7)/80)
  *
@@ -30,5 +30,5 @@ export const kConnorStevens1971: StoredChannel = storedChannel({
   source:
     'Connor JA, Stevens CF (1971), J Physiol 213:31–53; constants as collected in Dayan P, Abbott LF (2001), Theoretical Neuroscience, ch. 6',
   fromMemory: false,
-  note: 'Crustacean axon (walking leg). The temperature is inferred from the factor 3.8 on the rates, not printed.',
+  note: 'Isolated gastropod neurons (1971) with constants of crustacean axons (1977), as a textbook collects them; preparations from memory. The temperature is inferred from the factor 3.8 on the rates, not printed.',
 });

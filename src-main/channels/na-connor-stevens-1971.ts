@@ -2,7 +2,7 @@ import type { StoredChannel } from './kinetics.ts';
 import { storedChannel } from './stored.ts';
 
 /**
- * Transient sodium conductance of a crustacean axon, I = g·m³·h·(V − E), E = +55 mV.
+ * Transient sodium conductance of the Connor–Stevens membrane, I = g·m³·h·(V − E), E = +55 mV.
  *
  *     α_m = 0.38·(V + 29.7)/(1 − exp(−(V + 29.7)/10))    β_m = 15.2·exp(−(V + 54.7)/18)
  *     α_h = 0.266·exp(−(V + 48)/20)                      β_h = 3.8/(1 + exp(−(V + 18)/10))
@@ -38,5 +38,5 @@ export const naConnorStevens1971: StoredChannel = storedChannel({
   source:
     'Connor JA, Stevens CF (1971), J Physiol 213:31–53; constants as collected in Dayan P, Abbott LF (2001), Theoretical Neuroscience, ch. 6',
   fromMemory: false,
-  note: 'Crustacean axon (walking leg). The temperature is inferred from the factor 3.8 on the rates, not printed.',
+  note: 'Isolated gastropod neurons (1971) with constants of crustacean axons (1977), as a textbook collects them; preparations from memory. The temperature is inferred from the factor 3.8 on the rates, not printed.',
 });

@@ -1,6 +1,5 @@
 // The rows of the make-up table: what can be changed of a region's membrane. Pure.
 import type { MakeUpDocument, ShapedCellDocument } from '../../src-main/contract/documents.ts';
-import { channelWords } from '../text/channels.ts';
 
 export interface MakeUpRow {
   readonly words: string;
@@ -61,15 +60,15 @@ const fixed: readonly MakeUpRow[] = [
   },
 ];
 
-/** The fixed rows, then one per channel that any region has. */
-export function makeUpRows(cell: ShapedCellDocument): readonly MakeUpRow[] {
+/** The fixed rows, then one per channel that any region has, under what `channelWords` calls it. */
+export function makeUpRows(cell: ShapedCellDocument, channelWords: (channel: string) => string): readonly MakeUpRow[] {
   const names = new Set(cell.makeUp.flatMap((m) => m.channels.map((c) => c.channel)));
-  return [...fixed, ...[...names].map(channelRow)];
+  return [...fixed, ...[...names].map((channel) => channelRow(channel, channelWords(channel)))];
 }
 
-function channelRow(channel: string): MakeUpRow {
+function channelRow(channel: string, words: string): MakeUpRow {
   return {
-    words: channelWords(channel),
+    words,
     unit: 'mS/cm²',
     step: 1,
     least: 0,

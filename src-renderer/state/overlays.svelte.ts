@@ -7,6 +7,7 @@ export type OpenDialog =
   | { readonly kind: 'choose notebook'; readonly what: 'new' | 'open' | 'save as' }
   | { readonly kind: 'generate cell' }
   | { readonly kind: 'import report' }
+  | { readonly kind: 'add channel'; readonly region: string }
   | { readonly kind: 'session'; readonly sessionId: number }
   | { readonly kind: 'formula'; readonly topic: string };
 

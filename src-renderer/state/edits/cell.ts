@@ -41,6 +41,15 @@ export function withMakeUp(
   }));
 }
 
+/** Puts a channel into a region with a density of 0, which changes nothing yet; where it is already, it stays as it is. */
+export function withChannel(plan: PlanDocument, region: string, channel: string): PlanDocument {
+  return withMakeUp(plan, region, (m) =>
+    m.channels.some((c) => c.channel === channel)
+      ? m
+      : { ...m, channels: [...m.channels, { channel, density_mS_cm2: 0 }] },
+  );
+}
+
 /** Changes a region's own fields; a new name goes through to its make-up. */
 export function withRegion(plan: PlanDocument, region: string, fields: Partial<RegionDocument>): PlanDocument {
   return withShaped(plan, (cell) => ({
