@@ -11,7 +11,7 @@ import ProtocolArea from '../protocol/ProtocolArea.svelte';
 import ProtocolDetails from '../protocol/ProtocolDetails.svelte';
 import RehearseArea from '../rehearse/RehearseArea.svelte';
 import RehearseDetails from '../rehearse/RehearseDetails.svelte';
-import type { Area } from '../state/area.svelte.ts';
+import type { Area } from '../state/areas.ts';
 import type { Selection } from '../state/selection.svelte.ts';
 
 export function areaComponent(area: Area): Component {

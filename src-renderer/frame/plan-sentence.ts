@@ -1,11 +1,10 @@
 // The plan as one sentence: words and the fragments that can be changed. Pure; the plan line draws it.
 import type { PipetteDocument, PipetteLetter, PlanDocument, Site } from '../../src-main/contract/documents.ts';
 import type { CellDrawing } from '../../src-main/contract/results.ts';
-import type { Area } from '../state/area.svelte.ts';
+import type { Area } from '../state/areas.ts';
 import { mainLadder, withFirstRung, withLastRung, withRungCount, type MainLadder } from '../state/edits/ladder.ts';
 import { withMode, withPipette, type Mode } from '../state/edits/pipette.ts';
-import { numberWords } from '../state/edits/words.ts';
-import type { ChangeWords } from '../state/plan.svelte.ts';
+import { numberWords, type ChangeWords } from '../state/edits/words.ts';
 import { given, givenNumber, minus, thinSpace } from '../text/quantity.ts';
 import { siteWords } from '../text/places.ts';
 

@@ -1,6 +1,7 @@
 // Every action of the window, once: the keyboard, the command palette, the key help and the shell's menu read it.
 import type { ShellCommand } from '../../src-main/contract/bridge.ts';
-import { area, areas } from './area.svelte.ts';
+import { area } from './area.svelte.ts';
+import { areas } from './areas.ts';
 import { camera } from './camera.svelte.ts';
 import { cursor } from './cursor.svelte.ts';
 import { estimate } from './estimate.svelte.ts';

@@ -1,7 +1,5 @@
 // Which area of work is open.
-
-export const areas = ['Cell', 'Rig', 'Protocol', 'Rehearse', 'Forecast'] as const;
-export type Area = (typeof areas)[number];
+import type { Area } from './areas.ts';
 
 class AreaState {
   open = $state<Area>('Forecast');

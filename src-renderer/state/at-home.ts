@@ -1,6 +1,6 @@
 // What an area shows in its details when it is opened with nothing of its own selected: the thing most often looked at.
 import type { PlanDocument } from '../../src-main/contract/documents.ts';
-import type { Area } from './area.svelte.ts';
+import type { Area } from './areas.ts';
 import type { Selection } from './selection.svelte.ts';
 
 const atHome: Readonly<Record<Area, readonly Selection['kind'][]>> = {

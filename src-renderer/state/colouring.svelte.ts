@@ -1,7 +1,8 @@
 // What the cell's colours stand for. Each area has its own default; the user may choose another.
 import type { Tolerance } from '../../src-main/contract/documents.ts';
 import type { ClampSweep } from '../../src-main/contract/results.ts';
-import { area, type Area } from './area.svelte.ts';
+import { area } from './area.svelte.ts';
+import type { Area } from './areas.ts';
 import { cursor } from './cursor.svelte.ts';
 import { drawing } from './drawing.svelte.ts';
 import { estimate } from './estimate.svelte.ts';

@@ -14,11 +14,10 @@ import {
   undoWords,
   type History,
 } from './history.ts';
+import type { ChangeWords } from './edits/words.ts';
 import { notices } from './notices.svelte.ts';
 
 const saveAfter_ms = 600;
-
-export type ChangeWords = string | ((before: PlanDocument, after: PlanDocument) => string);
 
 class PlanState {
   planId = $state<number | null>(null);
@@ -28,6 +27,8 @@ class PlanState {
   /** Set by the notebook: a read-only notebook keeps no drafts. */
   keepsDrafts = $state(true);
   #history = $state.raw<History<PlanDocument> | null>(null);
+  /** The notebook that the open plan belongs to: a late draft must not land in another one. */
+  #notebook: string | null = null;
 
   readonly isOpen = $derived(this.planId !== null && this.#history !== null);
   readonly undoWords = $derived(this.#history === null ? null : undoWords(this.#history));
@@ -43,14 +44,20 @@ class PlanState {
     return present(this.#history);
   }
 
-  /** Shows an opened plan; undo starts anew. */
-  show(opened: OpenedPlan): void {
+  /** Shows an opened plan of the notebook at that path; undo starts anew. */
+  show(opened: OpenedPlan, notebook: string | null): void {
+    this.#notebook = notebook;
     this.planId = opened.planId;
     this.cellId = opened.cellId;
     this.savedAt = opened.savedAt;
     this.#history = begin(opened.plan);
     this.#keptDocument = opened.plan;
     this.#tell();
+  }
+
+  /** The notebook goes on in another file, and the plan with it. */
+  moveTo(notebook: string): void {
+    this.#notebook = notebook;
   }
 
   /** No plan is open any more. */
@@ -110,7 +117,8 @@ class PlanState {
     const document = this.document;
     if (document === this.#keptDocument) return;
     this.saving = true;
-    const answer = await ask('plan keep draft', { planId, plan: document });
+    const meant = this.#notebook === null ? {} : { notebook: this.#notebook };
+    const answer = await ask('plan keep draft', { planId, plan: document, ...meant });
     this.saving = false;
     if (answer.ok) {
       if (planId !== this.planId) return;
