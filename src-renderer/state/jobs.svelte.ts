@@ -11,13 +11,17 @@ export interface Job {
   readonly done: number | null;
   readonly left_s: number | null;
   readonly isCancelling: boolean;
+  /** Over in seconds: it says neither how far it is nor can it be cancelled. */
+  readonly isBrief: boolean;
 }
 
 class JobsState {
   list = $state.raw<readonly Job[]>([]);
 
-  begin(jobId: string, what: string): void {
-    this.list = [...this.list, { jobId, what, stage: '', done: null, left_s: null, isCancelling: false }];
+  /** @param only what it is at, for work that cannot tell how far it is and cannot be cancelled */
+  begin(jobId: string, what: string, only = ''): void {
+    const isBrief = only !== '';
+    this.list = [...this.list, { jobId, what, stage: only, done: null, left_s: null, isCancelling: false, isBrief }];
   }
 
   end(jobId: string): void {

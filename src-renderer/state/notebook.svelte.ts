@@ -19,6 +19,8 @@ class NotebookState {
 
   /** For other state: a plan was opened, with nothing of it selected yet. */
   whenPlanShown: () => void = () => undefined;
+  /** For other state: the notebook is about to be left; what is not saved yet must be. */
+  beforeLeaving: () => Promise<void> = () => Promise.resolve();
 
   readonly isReadOnly = $derived(this.overview?.status.readOnly ?? false);
   readonly cells = $derived(this.overview?.cells ?? []);
@@ -33,11 +35,18 @@ class NotebookState {
     plan.keepsDrafts = !overview.status.readOnly;
     if (!openLast) return;
     const first = overview.openPlanId ?? overview.cells.flatMap((c) => c.plans)[0]?.planId ?? null;
-    if (first === null) plan.close();
-    else await this.openPlan(first);
+    if (first === null) {
+      plan.close();
+      rehearsal.forget();
+    } else await this.#open(first);
   }
 
   async openPlan(planId: number): Promise<void> {
+    notices.leaveContext();
+    await this.#open(planId);
+  }
+
+  async #open(planId: number): Promise<void> {
     const ticket = ++this.#openings;
     await plan.keep();
     const opened = await askOrSay('plan open', { planId });
@@ -105,19 +114,27 @@ class NotebookState {
   }
 
   async createNotebook(path: string): Promise<void> {
-    await plan.keep();
+    notices.leaveContext();
+    await this.#keepAll();
     if ((await askOrSay('notebook create', { path })) !== null) await this.load(true);
   }
 
   async openNotebook(path: string): Promise<void> {
-    await plan.keep();
+    notices.leaveContext();
+    await this.#keepAll();
     if ((await askOrSay('notebook open', { path })) !== null) await this.load(true);
   }
 
-  async saveNotebookAs(path: string): Promise<void> {
+  async #keepAll(): Promise<void> {
     await plan.keep();
+    await this.beforeLeaving();
+  }
+
+  async saveNotebookAs(path: string): Promise<void> {
+    await this.#keepAll();
     const status = await askOrSay('notebook save as', { path });
     if (status === null) return;
+    plan.moveTo(status.path);
     await this.load(false);
     notices.say(`The notebook goes on in “${status.name}”`);
   }
@@ -143,7 +160,7 @@ class NotebookState {
   });
 
   async #show(opened: OpenedPlan): Promise<void> {
-    plan.show(opened);
+    plan.show(opened, this.overview?.status.path ?? null);
     selection.clear();
     cursor.sweep = 0;
     cursor.time_ms = null;

@@ -33,6 +33,11 @@ class NoticesState {
     this.list = this.list.filter((notice) => notice.id !== id);
   }
 
+  /** Something else is open now: what was refused before is no longer the matter. */
+  leaveContext(): void {
+    this.list = this.list.filter((notice) => notice.kind !== 'refused');
+  }
+
   #add(notice: Omit<NoticeEntry, 'id'>): void {
     // Three at most: more would cover the work they talk about.
     this.list = [...this.list, { ...notice, id: this.#next++ }].slice(-3);
