@@ -1,8 +1,9 @@
 // The only place that touches window.holdfast or fetch.
 import type { Bridge, FolderListing } from '../src-main/contract/bridge.ts';
-import { decodeFrame, encodeText } from '../src-main/contract/frame.ts';
+import { decodeFrame, encodePieces, encodeText } from '../src-main/contract/frame.ts';
 import type { RefusalCode } from '../src-main/contract/refusal.ts';
 import type { Answer, EngineEvent } from '../src-main/contract/requests.ts';
+import { mostRequest_bytes } from './state/file-limits.ts';
 
 type Streamed =
   | { readonly kind: 'answer'; readonly call: string; readonly answer: Answer }
@@ -10,6 +11,8 @@ type Streamed =
 
 const secretKey = 'holdfast-secret';
 const retry_ms = 1000;
+/** A browser lets as much outlive its page. */
+const mostLast_bytes = 60_000;
 /** Tries to reach the server again, after which it counts as gone. */
 const mostRetries = 5;
 
@@ -19,9 +22,18 @@ function browserBridge(): Bridge {
   const secret = enter();
   void secret.then((given) => listen(given));
 
+  let isLeaving = false;
+  window.addEventListener('pagehide', () => (isLeaving = true), { capture: true });
+  window.addEventListener('pageshow', () => (isLeaving = false));
+
   async function post(path: string, content: unknown): Promise<Response> {
+    return postBody(path, new Blob([encodeText(content)]));
+  }
+
+  async function postBody(path: string, body: Blob): Promise<Response> {
     const headers = { Authorization: `Bearer ${await secret}`, 'Content-Type': 'application/json' };
-    return fetch(path, { method: 'POST', headers, body: encodeText(content) });
+    // What is saved while the page goes away must outlive it.
+    return fetch(path, { method: 'POST', headers, body, keepalive: isLeaving && body.size < mostLast_bytes });
   }
 
   async function ask(name: string, question: unknown): Promise<Answer> {
@@ -29,7 +41,11 @@ function browserBridge(): Bridge {
     // Waits from the start: a late answer may overtake the word that it will be late.
     const late = new Promise<Answer>((resolve) => waiting.set(call, resolve));
     try {
-      const response = await post('/ask', { call, name, question });
+      const asked = { call, name, question };
+      // A file is encoded piece by piece, so that the page goes on meanwhile; the rest is short.
+      const body = new Blob(holdsFile(question) ? await encodePieces(asked, nextTurn) : [encodeText(asked)]);
+      if (body.size > mostRequest_bytes) return overLimit(body.size);
+      const response = await postBody('/ask', body);
       if (response.status === 202) return await late;
       return response.ok ? ((await framed(response)) as Answer) : turnedAway(response.status);
     } catch {
@@ -127,6 +143,21 @@ function joined(parts: readonly Uint8Array[]): Uint8Array<ArrayBuffer> {
     end += part.length;
   }
   return whole;
+}
+
+const nextTurn = (): Promise<void> => new Promise((resolve) => setTimeout(resolve));
+
+function holdsFile(question: unknown): boolean {
+  if (typeof question !== 'object' || question === null) return false;
+  return Object.values(question).some((field) => field instanceof Uint8Array);
+}
+
+function overLimit(size: number): Answer<never> {
+  const value = `${Math.ceil(size / 1e6)} MB`;
+  const most = `${Math.floor(mostRequest_bytes / 1e6)} MB`;
+  const remedy = `a browser tab sends at most ${most} at once: work on this cell in the desktop window`;
+  const refusal = { code: 'too-large', thing: 'what is to be sent', place: 'this tab', value, remedy } as const;
+  return { ok: false, refusals: [refusal] };
 }
 
 function gone(): Answer<never> {
