@@ -70,7 +70,7 @@ export class QuantityEntry {
 
   #check(text: string): ReturnType<typeof parseQuantity> {
     const { unit, least, most, isWhole, objection } = this.#rules();
-    const parsed = parseQuantity(text, unit);
+    const parsed = parseQuantity(text, unit, { least, most });
     if (!parsed.ok) return parsed;
     const room = (n: number): string => (unit === '' ? givenNumber(n) : `${givenNumber(n)} ${unit}`);
     if (parsed.value < least) return { ok: false, words: `Not below ${room(least)}.` };

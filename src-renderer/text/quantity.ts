@@ -113,11 +113,18 @@ export type Parsed = { readonly ok: true; readonly value: number } | { readonly 
 
 const quantityForm = /^([+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)\s*(.*)$/i;
 
+/** The least and the most that a field takes. */
+export interface Room {
+  readonly least: number;
+  readonly most: number;
+}
+const anywhere: Room = { least: -Infinity, most: Infinity };
+
 /**
  * Reads what a person typed into a field of the given unit. Without a unit the number is in the field's own; with
  * another of the same kind it is converted ("0.2 nA" into pA is 200); anything else is refused in words.
  */
-export function parseQuantity(text: string, unit: string): Parsed {
+export function parseQuantity(text: string, unit: string, room: Room = anywhere): Parsed {
   const plain = text
     .replaceAll(minus, '-')
     .replaceAll('–', '-')
@@ -129,16 +136,28 @@ export function parseQuantity(text: string, unit: string): Parsed {
   if (parts?.[1] === undefined) return { ok: false, words: `“${text.trim()}” is not a number.` };
   const number = parts[1];
   const typed = parts[2]?.trim() ?? '';
+  // "0x10", "1/3", "12-14": what follows the number is no unit, and the number alone would be another one.
+  if (/^[x/*^,:-]|\d/i.test(typed.replace(/(?:\^?[23])(?=\/|$)/g, ''))) {
+    return { ok: false, words: `“${text.trim()}” is not a number. Write it out, as in 12.5.` };
+  }
   if (!Number.isFinite(Number(number))) return { ok: false, words: `${number} is too large.` };
   if (typed === '' || plainUnit(typed) === unit) return { ok: true, value: Number(number) };
-  return convert(number, typed, unit);
+  return convert(number, typed, unit, room);
 }
 
-function convert(number: string, typed: string, unit: string): Parsed {
+function convert(number: string, typed: string, unit: string, room: Room): Parsed {
   const from = unitOf(typed);
   const to = unitOf(unit);
   const example = unit === '' ? number : `${number} ${unit}`;
-  if (from === null) return { ok: false, words: `${typed} is not a unit. Try ${example}.` };
+  if (from === null && typed === 'K' && to?.kind === 'temperature') {
+    const celsius = Number((Number(number) - 273.15).toFixed(2));
+    return { ok: false, words: `Temperatures are in °C here: ${number} K is ${givenNumber(celsius)} °C.` };
+  }
+  if (from === null) {
+    // No number is offered that the field would refuse next.
+    const fits = Number(number) >= room.least && Number(number) <= room.most;
+    return { ok: false, words: `${typed} is not a unit. ${fits ? `Try ${example}` : `This is in ${unit}`}.` };
+  }
   if (to?.kind !== from.kind) {
     const asked = unit === '' ? 'a plain number' : `a ${to?.kind ?? 'quantity'} in ${unit}`;
     return { ok: false, words: `${from.symbol} is a unit of ${from.kind}; this is ${asked}.` };

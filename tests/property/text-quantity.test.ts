@@ -74,6 +74,10 @@ describe('units as people type them', () => {
     ['12,5', 'mV', 'Write the decimal with a point, as in 12.5.'],
     ['', 'MΩ', 'Type a number, such as 12 MΩ.'],
     ['many', 'mV', '“many” is not a number.'],
+    ['0x10', 'MΩ', '“0x10” is not a number. Write it out, as in 12.5.'],
+    ['1/3', 'mV', '“1/3” is not a number. Write it out, as in 12.5.'],
+    ['10-20', 'ms', '“10-20” is not a number. Write it out, as in 12.5.'],
+    ['295 K', '°C', 'Temperatures are in °C here: 295 K is 21.85 °C.'],
     ['5 mV', '', 'mV is a unit of voltage; this is a plain number.'],
     ['1e999', 'mV', '1e999 is too large.'],
   ])('“%s” into %s is refused in words that lead on', (typed, unit, words) => {
