@@ -3,6 +3,9 @@ import { describe, expect, it } from 'vitest';
 import { readdirSync, readFileSync } from 'node:fs';
 import { isInstant } from '../../src-main/channels/kinetics.ts';
 import { storedChannels } from '../../src-main/channels/library.ts';
+import { operatingPoint } from '../../src-main/solver/operating-point.ts';
+import { runSweep } from '../../src-main/solver/sweep.ts';
+import { finished, largestDifference, pipette, smallGrid, steps, sweepOf } from '../support/small-grids.ts';
 
 const channels = [...storedChannels.values()];
 const published = readdirSync('tests/published').map((file) => readFileSync(`tests/published/${file}`, 'utf8'));
@@ -22,6 +25,30 @@ describe.each(channels)('$name', (channel) => {
         else expect(tau, `τ of ${gate.name} at ${V} mV`).toBeGreaterThan(0);
       }
     }
+  });
+
+  it('goes through a clamp of 10 MΩ from rest at −80 mV to −120, −20 and 60 mV, and halved steps tell no other story', () => {
+    const { name, reversal } = channel;
+    const compartment = { parent: -1, area_um2: 1000, channels: { leak: 0.1, [name]: 5 } };
+    const grid = smallGrid([compartment], { leak: -80, [name]: reversal });
+    const command = steps('mV', 80, [
+      [0, -80],
+      [10, -120],
+      [30, -20],
+      [60, 60],
+    ]);
+    const held = pipette('voltage clamp', command, { access: 10e6 });
+    const model = { grid, kinetics: storedChannels, temperature: 30 };
+    const rest = operatingPoint({ ...model, pipettes: [{ ...held, holding: -0.08 }] });
+    const current = (step: number): Float64Array =>
+      finished(
+        runSweep(sweepOf({ ...model, start: rest.state, duration: 0.08, pipettes: [held], sampling: 100e-6, step })),
+      ).current[0]!;
+    const [coarse, fine] = [current(25e-6), current(12.5e-6)];
+    const largest = fine.reduce((most, I) => Math.max(most, Math.abs(I)), 0);
+    // Measured, while the patch charges within 0.3 ms of a jump: 0.2 % of the largest current, of which 0.13 % is
+    // charging alone; up to 0.9 % with a gate that follows at once. Both fall with the square of the step.
+    expect(largestDifference(coarse, fine) / largest).toBeLessThan(channel.gates.some(isInstant) ? 0.01 : 0.0025);
   });
 
   it('scales nothing without a temperature to scale from', () => {
