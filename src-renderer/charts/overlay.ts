@@ -8,8 +8,9 @@ import { axisLabel, valueAt, type Cursor, type Picture, type Series } from './se
 type Canvas = Chart<'line'>;
 
 const note = '11px "Fira Sans", sans-serif';
-/** A legend's row: the swatch before a name, the gap after it, the chart's menu at the right end. */
-const rowSwatch = 30;
+/** A legend's row: the swatch before a name (a mark takes less than a line), the gap after it, the chart's menu at the right end. */
+const lineSwatch = 30;
+const markSwatch = 14;
 const rowGap = 14;
 const menuRoom = 36;
 
@@ -39,8 +40,8 @@ export function paintUnder(chart: Canvas, picture: Picture, read: ReadToken): vo
       ctx.textAlign = 'right';
       ctx.fillText(shading.label, from + size - 6, area.bottom - 6);
     } else if (shading.axis === 'y' && size > 16) {
-      ctx.textAlign = 'left';
-      ctx.fillText(shading.label, area.left + 8, Math.min(area.bottom, from + size) - 6);
+      ctx.textAlign = 'right';
+      ctx.fillText(shading.label, area.right - 8, Math.min(area.bottom, from + size) - 6);
     }
   }
   for (const mark of picture.marks) {
@@ -108,14 +109,14 @@ function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
   const named = picture.series.filter((one) => one.quiet !== true);
   if (named.length === 0) return;
   const widths = named.map((one) => ctx.measureText(one.label).width);
-  const inRow = widths.reduce((sum, width) => sum + width + rowSwatch + rowGap, 0);
+  const inRow = named.reduce((sum, one, i) => sum + (widths[i] ?? 0) + swatchRoom(one) + rowGap, 0);
   const labelEnd = Math.max(0, area.left - 40) + ctx.measureText(axisLabel(picture.y)).width;
   const rowEnd = area.right - menuRoom;
   if (rowEnd - inRow > labelEnd + rowGap) {
     let x = rowEnd - inRow + rowGap;
     named.forEach((one, i) => {
       paintName(ctx, one, x, area.top - 14, read);
-      x += (widths[i] ?? 0) + rowSwatch + rowGap;
+      x += (widths[i] ?? 0) + swatchRoom(one) + rowGap;
     });
     return;
   }
@@ -129,11 +130,15 @@ function paintLegend(chart: Canvas, picture: Picture, read: ReadToken): void {
   named.forEach((one, i) => paintName(ctx, one, box.left + 8, box.top + 13 + i * 16, read));
 }
 
+function swatchRoom(one: Series): number {
+  return one.drawn === 'points' ? markSwatch : lineSwatch;
+}
+
 function paintName(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number, read: ReadToken): void {
   swatch(ctx, one, x, y, read);
   ctx.fillStyle = read('--ink');
   ctx.textAlign = 'left';
-  ctx.fillText(one.label, x + rowSwatch, y + 4);
+  ctx.fillText(one.label, x + swatchRoom(one), y + 4);
 }
 
 function swatch(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number, read: ReadToken): void {
@@ -149,7 +154,7 @@ function swatch(ctx: CanvasRenderingContext2D, one: Series, x: number, y: number
     ctx.stroke();
     ctx.setLineDash([]);
   }
-  if (one.drawn !== 'line') shape(ctx, one.shape ?? 'circle', x + 12, y);
+  if (one.drawn !== 'line') shape(ctx, one.shape ?? 'circle', x + (one.drawn === 'points' ? 4 : 12), y);
 }
 
 function shape(ctx: CanvasRenderingContext2D, kind: NonNullable<Series['shape']>, x: number, y: number): void {

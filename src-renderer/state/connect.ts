@@ -21,6 +21,7 @@ export function connect(): void {
   plan.whenChanged((document) => {
     drawing.follow(document);
     estimate.follow(document);
+    void ranCell.follow();
   });
   area.whenShown = selectAtHome;
   notebook.whenPlanShown = selectAtHome;
@@ -34,7 +35,7 @@ export function connect(): void {
   rehearsal.whenShown = (stored) => {
     // The sweep that decides is looked at first.
     cursor.sweep = stored.forecast.clamp?.worstSweep ?? Math.min(cursor.sweep, stored.summary.sweeps - 1);
-    void ranCell.follow(stored);
+    void ranCell.follow();
   };
   bridge.onEvent((event) => {
     jobs.hear(event);

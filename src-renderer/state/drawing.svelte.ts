@@ -14,8 +14,15 @@ class DrawingState {
   drawing = $state.raw<CellDrawing | null>(null);
   refusals = $state.raw<readonly RefusalData[]>([]);
   isAsking = $state(false);
+  /** What the drawing is of. */
+  #of = $state.raw<{ readonly cell: CellDocument; readonly sites: string } | null>(null);
   #cell: CellDocument | null = null;
   #sites = '';
+
+  /** The drawing is of that plan's cell, cut for its sites. */
+  isOf(plan: PlanDocument): boolean {
+    return this.#of?.cell === plan.cell && this.#of.sites === JSON.stringify(sitesOf(plan));
+  }
 
   /** Asks for the drawing when the cell or the sites on it changed. */
   follow(plan: PlanDocument): void {
@@ -34,6 +41,7 @@ class DrawingState {
     this.isAsking = false;
     if (answer.ok) {
       this.drawing = answer.value;
+      this.#of = { cell: question.cell, sites: JSON.stringify(question.sites) };
       this.refusals = [];
     } else this.refusals = 'refusals' in answer ? answer.refusals : [];
   });

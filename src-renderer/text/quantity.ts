@@ -34,7 +34,9 @@ export function figureNumber(value: number, digits = 3): string {
   if (value === 0) return '0';
   const size = Math.abs(value);
   if (size >= 1e6 || size < 1e-4) return power(value, digits);
-  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(size)));
+  // Of the rounded size: 0.09999 to three digits is 0.100, not 0.1000.
+  const rounded = Number(size.toPrecision(digits));
+  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(rounded)));
   const text = value.toFixed(decimals);
   return (Number(text) === 0 ? '0' : text).replace('-', minus);
 }
