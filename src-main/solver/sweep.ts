@@ -19,7 +19,8 @@ const workBetweenPolls = 100_000;
  * One sweep of a cell under its pipettes.
  *
  * Gates and voltages are staggered by half a step: gates go exactly exponentially at the voltage in between, voltages by
- * Crank–Nicolson as a backward half step and an extrapolation. After every jump or bend of a command, and at the start,
+ * Crank–Nicolson as a backward half step and an extrapolation. A gate that follows the voltage at once is taken to the
+ * middle of the step along its last two values. After every jump or bend of a command, and at the start,
  * the first few steps are damped, so that fast modes die out instead of ringing. Second order in the step. The same input
  * gives the same bits.
  *
