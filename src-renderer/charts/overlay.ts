@@ -1,7 +1,7 @@
 // What Chart.js does not draw: shadings and marks below the data; axis words, legend and crosshair above it.
 import type { Chart } from 'chart.js';
 import { dash, lineWidth } from './drawing-order.ts';
-import { emptiestCorner } from './legend-corner.ts';
+import { covered, emptiestCorner, type Box } from './legend-corner.ts';
 import { faint, paintColour, type ReadToken } from './paint.ts';
 import { axisLabel, valueAt, type Cursor, type Picture, type Series } from './series.ts';
 
@@ -59,9 +59,13 @@ export function paintUnder(chart: Canvas, picture: Picture, read: ReadToken): vo
     }
     ctx.stroke();
     if (mark.axis === 'x') {
-      const fits = at + 6 + ctx.measureText(mark.label).width < area.right;
-      ctx.textAlign = fits ? 'left' : 'right';
-      ctx.fillText(mark.label, at + (fits ? 6 : -6), area.top + 11);
+      const width = ctx.measureText(mark.label).width;
+      const fits = at + 6 + width < area.right;
+      const box = { left: fits ? at + 6 : at - 6 - width, top: area.top, width, height: 14 };
+      const isFreer = covered(lineOf(chart, picture, box), { ...box, top: area.bottom - 14 }) === 0;
+      const isAtTop = covered(lineOf(chart, picture, box), box) === 0 || !isFreer;
+      ctx.textAlign = 'left';
+      ctx.fillText(mark.label, box.left, isAtTop ? area.top + 11 : area.bottom - 5);
     } else {
       ctx.textAlign = 'right';
       ctx.fillText(mark.label, area.right - 6, at - 5);
@@ -90,6 +94,19 @@ export function paintOver(chart: Canvas, picture: Picture, cursor: Cursor | null
 function* drawnPoints(chart: Canvas): Generator<{ x: number; y: number }> {
   for (let k = 0; k < chart.data.datasets.length; k += 1) {
     for (const point of chart.getDatasetMeta(k).data) yield point;
+  }
+}
+
+/** Drawn points, and the lines between them where they pass over or under a box. */
+function* lineOf(chart: Canvas, picture: Picture, box: Box): Generator<{ x: number; y: number }> {
+  yield* drawnPoints(chart);
+  const scale = chart.scales['x'];
+  for (const one of picture.series) {
+    if (one.drawn === 'points') continue;
+    for (let x = box.left; x <= box.left + box.width; x += 4) {
+      const y = valueAt(one, scale?.getValueForPixel(x) ?? NaN);
+      if (y !== null) yield { x, y: pixel(chart, 'y', y) };
+    }
   }
 }
 

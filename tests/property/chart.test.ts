@@ -3,7 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { xExtent, yExtent } from '../../src-renderer/charts/extent.ts';
 import { extremes } from '../../src-renderer/charts/extremes.ts';
-import { emptiestCorner } from '../../src-renderer/charts/legend-corner.ts';
+import { covered, emptiestCorner } from '../../src-renderer/charts/legend-corner.ts';
 import { nearest } from '../../src-renderer/charts/nearest.ts';
 import { chartNumbers } from '../../src-renderer/charts/numbers.ts';
 import { ladderPlace, mixed, paintColour } from '../../src-renderer/charts/paint.ts';
@@ -162,6 +162,8 @@ describe('the view', () => {
       { x: 5, y: 5 },
     ];
     expect(emptiestCorner(crowd, plot, 30, 20)).toMatchObject({ left: 4, top: 80 });
+    expect(covered(crowd, { left: 90, top: 0, width: 10, height: 100 })).toBe(2);
+    expect(covered(crowd, { left: 40, top: 0, width: 10, height: 100 })).toBe(0);
   });
 });
 
