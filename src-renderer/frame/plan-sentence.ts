@@ -27,6 +27,8 @@ export interface NumberFragment extends Owned {
   readonly least: number;
   readonly most: number;
   readonly isWhole: boolean;
+  /** What the plan holds at this place. */
+  readonly read: (plan: PlanDocument) => number;
   /** What undo will say, of what was typed and what became of it. */
   readonly undoWords: (typed: number) => ChangeWords;
   /** Of the plan as it stood when the edit began, not of what a half-typed number made of it. */
@@ -340,7 +342,8 @@ function number(
     readonly change: (plan: PlanDocument, value: number) => PlanDocument;
   },
 ): NumberFragment {
-  const { undo, read, ...rest } = f;
+  const { undo, ...rest } = f;
+  const { read } = f;
   return {
     kind: 'number',
     words: given(f.value, f.unit),

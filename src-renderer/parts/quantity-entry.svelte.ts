@@ -10,15 +10,19 @@ export interface EntryRules {
   readonly isWhole: boolean;
   /** A further objection in words, or null. */
   readonly objection: (value: number) => string | null;
-  readonly change: (value: number) => void;
+  /** @returns what it became: the owner may take another value, such as one at whole rungs */
+  readonly change: (value: number) => number;
 }
 
 export class QuantityEntry {
   readonly #rules: () => EntryRules;
-  /** Text that is being typed, and the value it was typed against: a value changed from elsewhere drops it. */
-  #draft = $state.raw<{ readonly text: string; readonly against: number } | null>(null);
+  /**
+   * Text that is being typed, and the values it goes with: the one before, the one typed, the one it became (the owner's
+   * value follows only after the event). A value changed from elsewhere drops the text.
+   */
+  #draft = $state.raw<{ readonly text: string; readonly with: readonly number[] } | null>(null);
   #before = 0;
-  readonly #isLive = $derived.by(() => this.#draft !== null && Object.is(this.#draft.against, this.#rules().value));
+  readonly #isLive = $derived.by(() => this.#draft?.with.includes(this.#rules().value) ?? false);
 
   constructor(rules: () => EntryRules) {
     this.#rules = rules;
@@ -40,8 +44,9 @@ export class QuantityEntry {
 
   type(text: string): void {
     const checked = this.#check(text);
-    if (checked.ok) this.#take(checked.value);
-    this.#draft = { text, against: this.#rules().value };
+    const before = this.#rules().value;
+    const goesWith = checked.ok ? [before, checked.value, this.#take(checked.value)] : [before];
+    this.#draft = { text, with: goesWith };
   }
 
   /** Arrow keys. */
@@ -64,8 +69,8 @@ export class QuantityEntry {
     if (this.error === null) this.#draft = null;
   }
 
-  #take(value: number): void {
-    if (!Object.is(value, this.#rules().value)) this.#rules().change(value);
+  #take(value: number): number {
+    return Object.is(value, this.#rules().value) ? value : this.#rules().change(value);
   }
 
   #check(text: string): ReturnType<typeof parseQuantity> {

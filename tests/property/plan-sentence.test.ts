@@ -51,7 +51,7 @@ describe('a number typed digit by digit', () => {
   });
 
   it('is named in the undo words beside the rung it led to', () => {
-    expect(typed(plan, 'last', '-63').undo).toBe('last rung 40 → −70\u2009mV, nearest to −63');
+    expect(typed(plan, 'last', '-63').undo).toBe('last rung 40 → −60\u2009mV, nearest to −63');
   });
 });
 

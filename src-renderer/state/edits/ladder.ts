@@ -64,7 +64,7 @@ function towards(span: number, increment: number): number {
 
 function rungsBetween(first: number, last: number, increment: number): number {
   if (increment === 0) return 1;
-  return Math.max(1, Math.min(10_000, Math.floor((last - first) / increment + 1e-9) + 1));
+  return Math.max(1, Math.min(10_000, Math.round((last - first) / increment) + 1));
 }
 
 function withRungs(plan: PlanDocument, start: number, increment: number, count: number): PlanDocument {
