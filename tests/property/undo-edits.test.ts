@@ -49,6 +49,15 @@ describe('changes of the rig', () => {
     }
   });
 
+  it('a small voltage step on a cell of high resistance becomes a small current, not none', () => {
+    const block = { kind: 'step', id: 'pulse', duration_ms: 10, level: -80 } as const;
+    const lanes = [{ pipette: 'A', unit: 'mV', holding: -70, blocks: [block] }] as const;
+    const plan = { ...start, protocol: { ...start.protocol, lanes: [...lanes], ladders: [], readings: [] } };
+    // 10 mV over 2300 MΩ is 4.3 pA.
+    const now = withMode(plan as unknown as PlanDocument, 'A', 'current clamp', 2300);
+    expect(now.protocol.lanes[0]?.blocks[0]).toMatchObject({ level: -5 });
+  });
+
   it('switching A to current clamp balances the bridge to the access resistance; back, there is none', () => {
     const plan = withMode(start, 'A', 'current clamp', 100);
     expect(plan.rig.pipettes[0]).toMatchObject({ accessResistance_MOhm: 12, bridge_MOhm: 12 });

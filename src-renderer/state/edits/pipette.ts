@@ -77,6 +77,12 @@ function currentLadder(resistance_MOhm: number): Rungs {
   return { start: -2 * increment, increment, count: 5 };
 }
 
+/** To 10 pA; a current that would round to nothing keeps its first digit. */
+function roundCurrent(pA: number): number {
+  const rounded = 10 * Math.round(pA / 10) + 0;
+  return rounded === 0 && pA !== 0 ? Math.sign(pA) * round125(Math.abs(pA)) : rounded;
+}
+
 /** The nearest of 1, 2, 5 times a power of ten, by ratio. */
 function round125(value: number): number {
   const decade = 10 ** Math.floor(Math.log10(value));
@@ -97,7 +103,7 @@ interface Turning {
 function turning(lane: Lane, resistance_MOhm: number): Turning {
   // mV / MΩ = nA = 1000 pA.
   if (lane.unit === 'mV') {
-    const difference = (mV: number): number => 10 * Math.round(((mV / resistance_MOhm) * 1000) / 10) + 0;
+    const difference = (mV: number): number => roundCurrent((mV / resistance_MOhm) * 1000);
     const rungs = currentLadder(resistance_MOhm);
     return { rungs, level: (mV) => difference(mV - lane.holding), difference, holding: 0 };
   }
