@@ -89,7 +89,7 @@ describe('the plan line', () => {
         parseFloat(getComputedStyle(node).lineHeight),
       ]);
       // A fragment's underline reaches a little below its line.
-      expect(height, name).toBeLessThanOrEqual(2 * lead! + 8);
+      expect(height, name).toBeLessThanOrEqual(2 * lead + 8);
       // A fragment and the stop behind it lie on one line: one box, not two.
       const boxes = await sentence.locator('.whole').evaluateAll((all) => all.map((n) => n.getClientRects().length));
       expect(new Set(boxes), name).toEqual(new Set([1]));
