@@ -15,8 +15,13 @@ export function errorValues(sweep: ClampSweep, kind: ErrorKind, part: ErrorPart)
   if (kind === 'settling') return sweep.settling_ms;
   if (kind === 'worst') return sweep.worst_mV;
   if (part === 'whole') return sweep.steady_mV;
-  if (part === 'access') return sweep.access_mV;
-  return sweep.steady_mV.map((error, k) => error - (sweep.access_mV[k] ?? NaN));
+  const access = accessPart(sweep);
+  return part === 'access' ? access : sweep.steady_mV.map((error, k) => error - (access[k] ?? NaN));
+}
+
+/** Rehearsals of earlier engines know the part at one clamp alone, and were told by it everywhere. */
+function accessPart(sweep: Omit<ClampSweep, 'access_mV'> & Partial<Pick<ClampSweep, 'access_mV'>>): Float64Array {
+  return sweep.access_mV ?? sweep.steady_mV.map(() => sweep.accessPart_mV);
 }
 
 /** The tolerance of one sweep in mV: as given, or its share of |level − holding|. Null where that step is zero or unknown. */

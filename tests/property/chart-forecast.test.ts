@@ -66,6 +66,10 @@ describe('clamp error along the cell', () => {
     whole.forEach((value, k) => expect((access[k] ?? NaN) + (cable[k] ?? NaN)).toBeCloseTo(value, 12));
     expect(Array.from(cable)).toEqual([0, -5, -10, 2]);
     expect(errorValues(sweep, 'worst', 'cable')).toBe(sweep.worst_mV);
+    // Stored by an engine that knew the access part at one clamp alone.
+    const older: ClampSweep = { ...sweep };
+    Reflect.deleteProperty(older, 'access_mV');
+    expect([...errorValues(older, 'steady', 'access')]).toEqual([2, 2, 2, 2]);
   });
 
   it('every compartment is one point of its own region, and a point leads back to its compartment', () => {

@@ -1,6 +1,6 @@
 // A rehearsal among others of its plan: what it was run with, how one of its sweeps fares, and its values on the cell now.
 import { describe, expect, it } from 'vitest';
-import type { CellDocument, PipetteDocument } from '../../src-main/contract/documents.ts';
+import { cellSchema, type CellDocument, type PipetteDocument } from '../../src-main/contract/documents.ts';
 import type {
   ClampForecast,
   ClampSweep,
@@ -8,6 +8,7 @@ import type {
   PassiveEstimate,
   Trace,
 } from '../../src-main/contract/results.ts';
+import { cautionsOf } from '../../src-renderer/forecast/cautions.ts';
 import { topicWithin } from '../../src-renderer/forecast/definitions.ts';
 import { largestCommand } from '../../src-renderer/forecast/largest-command.ts';
 import { regionRows, sweepWords } from '../../src-renderer/forecast/region-rows.ts';
@@ -70,6 +71,7 @@ describe('one sweep of a forecast', () => {
     worst_mV: Float64Array.of(50, -60),
     settling_ms: Float64Array.of(1, NaN),
     accessPart_mV: 2,
+    access_mV: Float64Array.of(2, 2),
   });
   const clamp: ClampForecast = {
     pipette: 'A',
@@ -104,6 +106,18 @@ describe('one sweep of a forecast', () => {
     expect(topicWithin('reach', { ...inCurrentClamp, clamp })).toBe('reach');
   });
 
+  it('warns of what its engine warns of, and of arithmetic worse than the tolerance', () => {
+    const computed = (clampError_mV: number) => ({ state: 'computed' as const, clampError_mV, reach: 0 });
+    expect(cautionsOf({ clamp, numerical: computed(4.9), cautions: ['fires'] })).toEqual(['fires']);
+    const both = cautionsOf({ clamp, numerical: computed(-35), cautions: ['fires'] });
+    expect(both.map(plain)).toEqual(['fires', expect.stringMatching(/35 mV, is above the tolerance of 5 mV/)]);
+    expect(cautionsOf({ clamp, numerical: computed(35), cautions: ['Numerical uncertainty is large'] })).toHaveLength(
+      1,
+    );
+    // Stored by an engine that gave none.
+    expect(cautionsOf({ clamp: null, numerical: { state: 'pending', clampError_mV: null, reach: null } })).toEqual([]);
+  });
+
   it('the largest command is told for a pipette in current clamp alone', () => {
     const trace = (key: string, unit: Trace['unit'], values: number[]): Trace => ({
       sweep: 0,
@@ -135,7 +149,7 @@ describe('values of a rehearsal on the cell as it stands', () => {
 
   it('are carried over to the same geometry only; the membrane may differ', () => {
     const cell = (length_um: number, Rm: number): CellDocument =>
-      ballAndStick({ soma_um: 20, stick_um: 2, length_um }, { Rm, Ri: 100, Cm: 1 });
+      cellSchema.parse(ballAndStick({ soma_um: 20, stick_um: 2, length_um }, { Rm, Ri: 100, Cm: 1 }));
     expect(isSameShape(cell(100, 1e4), cell(100, 2e4))).toBe(true);
     expect(isSameShape(cell(100, 1e4), cell(101, 1e4))).toBe(false);
   });
