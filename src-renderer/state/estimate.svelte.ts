@@ -14,7 +14,8 @@ class EstimateState {
   /** The plan the value belongs to. */
   of = $state.raw<PlanDocument | null>(null);
 
-  readonly follow = newestOnly(120, async (document: PlanDocument, isNewest) => {
+  // Without waiting for quiet, so that it follows a drag as fast as the engine answers; one is under way at a time.
+  readonly follow = newestOnly(0, async (document: PlanDocument, isNewest) => {
     const [estimate, check] = await Promise.all([
       ask('estimate passive', { plan: document }),
       ask('plan check', { plan: document }),
