@@ -15,6 +15,6 @@ export default defineConfig({
     assetsInlineLimit: 0,
     modulePreload: false,
     // How long each plugin took is of no use to somebody who starts the program.
-    rolldownOptions: { checks: { pluginTimings: false } },
+    rolldownOptions: { checks: { bundlerTimings: false } },
   },
 });
